@@ -87,14 +87,20 @@ export default tseslint.config(
     files: ['**/*.{js,mjs}'],
     extends: [eslint.configs.recommended, tseslint.configs.disableTypeChecked],
     languageOptions: {
-      globals: {
-        console: 'readonly',
-        process: 'readonly',
-        URL: 'readonly',
-        fetch: 'readonly',
-        setTimeout: 'readonly',
-        clearTimeout: 'readonly',
-      },
+      globals: Object.fromEntries(
+        [
+          'AbortSignal',
+          'URL',
+          'clearInterval',
+          'clearTimeout',
+          'console',
+          'fetch',
+          'performance',
+          'process',
+          'setInterval',
+          'setTimeout',
+        ].map((name) => [name, 'readonly']),
+      ),
     },
   },
 );
