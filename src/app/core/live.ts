@@ -7,6 +7,7 @@ import {
   effect,
   inject,
   signal,
+  untracked,
 } from '@angular/core';
 import { Subject, type Observable } from 'rxjs';
 import { streamEvent, streamPath, type StreamEvent } from '@shared/api/stream';
@@ -14,7 +15,10 @@ import { Clock } from './clock';
 import { SessionStore } from './session';
 
 /** What `Live` uses of the browser's EventSource, so that tests can stand in for it. */
-export type EventStream = Pick<EventSource, 'addEventListener' | 'close'>;
+export interface EventStream {
+  addEventListener(type: string, listener: (event: MessageEvent<string>) => void): void;
+  close(): void;
+}
 export const openEventStream = new InjectionToken<(url: string) => EventStream>('openEventStream', {
   providedIn: 'root',
   factory: () => (url) => new EventSource(url),
@@ -67,7 +71,10 @@ export class Live {
     const onVisibility = () => this.visible.set(this.document.visibilityState !== 'hidden');
     this.document.addEventListener('visibilitychange', onVisibility);
     const wanted = computed(() => this.visible() && this.session.user() !== null);
-    effect(() => (wanted() ? this.connect() : this.stop()));
+    effect(() => {
+      const isWanted = wanted();
+      untracked(() => (isWanted ? this.connect() : this.stop()));
+    });
     const watching = setInterval(() => this.watch(), 5000);
     inject(DestroyRef).onDestroy(() => {
       this.document.removeEventListener('visibilitychange', onVisibility);
