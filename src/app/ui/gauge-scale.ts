@@ -3,7 +3,7 @@ const niceSteps = [1, 1.2, 1.5, 2, 2.5, 3, 4, 5, 6, 8, 10];
 /**
  * Ends of a gauge [mol/mol] that shows limits and values together.
  *
- * It begins at zero unless everything would crowd into the last two fifths (a purity near its limit). The limits rule
+ * It begins at zero unless everything would crowd into the far end, as with a purity and its limit. The limits rule
  * the far end, so that the picture stands still while the value moves, until a value comes near that end.
  */
 export function gaugeScale(shown: {
@@ -17,7 +17,7 @@ export function gaugeScale(shown: {
   const [lowest, highest] = [Math.min(...all), Math.max(...all)];
   if (highest <= 0) return { min: 0, max: 0.01 };
 
-  if (lowest > 0.6 * highest) {
+  if (lowest > 0.6 && highest - lowest < 0.4 * highest) {
     const span = Math.max(highest - lowest, 0.02 * highest);
     return { min: Math.max(0, lowest - span), max: Math.min(1, highest + span) };
   }

@@ -18,11 +18,11 @@ const glyphs: Record<Quality, string> = {
     <span class="word"><app-glyph [path]="glyph()" />{{ quality() }}</span>
     @if (shown().length > 0) {
       <span class="reasons">
-        @for (reason of shown(); track reason; let isLast = $last) {
-          <span>{{ reason }}{{ isLast ? '' : '; ' }}</span>
+        @for (reason of shown(); track reason) {
+          <span class="reason">{{ reason }}</span>
         }
         @if (hidden() > 0) {
-          <span>and {{ hidden() }} more</span>
+          <span class="reason">and {{ hidden() }} more</span>
         }
       </span>
     }
@@ -32,11 +32,14 @@ const glyphs: Record<Quality, string> = {
       display: block;
     }
     .word {
-      display: inline-flex;
-      align-items: center;
-      gap: 4px;
-      margin-right: 6px;
+      margin-right: 8px;
       font-weight: 500;
+    }
+    app-glyph {
+      margin-right: 4px;
+    }
+    .reason:not(:last-child)::after {
+      content: ' · ';
     }
     :host(.good) .word {
       font-weight: 400;

@@ -63,7 +63,7 @@ export class Sparkline {
   protected readonly limitPlace = computed(() => {
     const limit = this.limit();
     const { low, high } = this.range();
-    if (limit === null || limit < low || limit > high) return null;
+    if (limit === null || this.last() === null || limit < low || limit > high) return null;
     return `${(100 * (high - limit)) / (high - low)}%`;
   });
 }
