@@ -21,6 +21,12 @@ export const routes: Routes = [
         loadComponent: async () => (await import('./board/board')).Board,
       },
       {
+        path: 'journal',
+        title: 'Journal',
+        canActivate: [allowed('look')],
+        loadComponent: async () => (await import('./journal/journal')).Journal,
+      },
+      {
         path: 'not-allowed',
         title: 'Not for your role',
         loadComponent: async () => (await import('./shell/not-allowed')).NotAllowed,

@@ -29,7 +29,7 @@ import { chanceWords, direction } from './row-words';
   host: {
     '[class.urgent]': "attention().tone === 'urgent'",
     '[class.attention]': "attention().tone === 'attention'",
-    '[class.stale]': "attention().kind === 'stale' || staleToo() !== null",
+    '[class.stale]': 'hasStopped()',
   },
 })
 export class BoardRow {
@@ -68,12 +68,12 @@ export class BoardRow {
     if (kind === 'uncertain') return '';
     return kind === 'stale' && latest ? `${words} for ${durationWords(this.clock.now() - latest.t)}` : words;
   });
+  protected readonly hasStopped = computed(() => isStale(this.sensor(), this.clock.now()));
   /** How long no new minute has come, where something else is said first. */
   protected readonly staleToo = computed(() => {
     const { latest } = this.sensor();
-    const now = this.clock.now();
     const isSaid = this.attention().kind === 'stale';
-    return latest && !isSaid && isStale(this.sensor(), now) ? durationWords(now - latest.t) : null;
+    return latest && this.hasStopped() && !isSaid ? durationWords(this.clock.now() - latest.t) : null;
   });
   /** The last sample, where it is not the one in use. */
   protected readonly otherSample = computed(() => {

@@ -33,7 +33,7 @@ export type LiveState =
   | { readonly kind: 'lost'; readonly since: number };
 
 const firstRetryMs = 1000;
-const longestRetryMs = 30_000;
+const longestRetryMs = 15_000;
 /** Beats come each 15 s at least: after two missed ones a connection that looks open is dead. */
 const silenceMs = 40_000;
 

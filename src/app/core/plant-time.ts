@@ -65,6 +65,11 @@ export function plantDay(t: number, zone: string): string {
   return formatter(zone, { weekday: 'long', day: 'numeric', month: 'long', year: 'numeric' }).format(t);
 }
 
+/** `Wednesday, 2 December 2026, AST`: heads a list of times of that day. */
+export function plantDayWithZone(t: number, zone: string): string {
+  return `${plantDay(t, zone)}, ${zoneName(t, zone)}`;
+}
+
 /** UTC milliseconds at which the plant's day that holds `t` began. */
 export function plantDayStart(t: number, zone: string): number {
   const { date } = plantWallClock(t, zone);
@@ -160,6 +165,10 @@ export class PlantTime {
 
   day(t: number): string {
     return plantDay(t, this.zone);
+  }
+
+  dayWithZone(t: number): string {
+    return plantDayWithZone(t, this.zone);
   }
 
   dayStart(t: number): number {

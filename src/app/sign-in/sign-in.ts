@@ -47,8 +47,8 @@ export class SignIn {
       return;
     }
     this.refusal.set(outcome.failure);
-    this.form.controls.password.reset();
-    password.focus();
+    // Selected, not emptied: an empty field would complain beside the server's words.
+    password.select();
   }
 
   protected watchCapsLock(event: KeyboardEvent): void {
