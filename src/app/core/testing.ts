@@ -1,13 +1,14 @@
-import { provideHttpClient } from '@angular/common/http';
+import { provideHttpClient, withInterceptors } from '@angular/common/http';
 import { HttpTestingController, provideHttpClientTesting } from '@angular/common/http/testing';
 import type { EnvironmentProviders, Provider } from '@angular/core';
 import { TestBed } from '@angular/core/testing';
-import { provideRouter } from '@angular/router';
+import { provideRouter, type Routes } from '@angular/router';
 import type { Role, Session } from '@shared/api/session';
 import { sessionPath } from '@shared/api/session';
 import type { StreamEvent } from '@shared/api/stream';
 import { openEventStream, type EventStream } from './live';
 import { SessionStore } from './session';
+import { sessionInterceptor } from './session-interceptor';
 import { wallTime } from './wall-time';
 
 /** 2 December 2026, 14:07 in Halifax (18:07 UTC). */
@@ -70,13 +71,13 @@ export class FakeEventStream implements EventStream {
 
 /** What a component spec needs around it: HTTP under control, a still clock, no real stream. */
 export function provideTestCore(
-  options: { now?: () => number; streams?: FakeEventStreams } = {},
+  options: { now?: () => number; streams?: FakeEventStreams; routes?: Routes } = {},
 ): (Provider | EnvironmentProviders)[] {
   const streams = options.streams ?? new FakeEventStreams();
   return [
-    provideHttpClient(),
+    provideHttpClient(withInterceptors([sessionInterceptor])),
     provideHttpClientTesting(),
-    provideRouter([]),
+    provideRouter(options.routes ?? [{ path: '**', children: [] }]),
     { provide: wallTime, useValue: options.now ?? (() => testNow) },
     { provide: openEventStream, useValue: streams.open },
   ];
