@@ -1,5 +1,5 @@
-// jsdom lacks these browser features, on which charts and the shell rely.
-class UnobservedResize {
+// jsdom lacks these browser features, on which charts, deferred views and the theme rely.
+class Unobserved {
   observe(): void {
     return;
   }
@@ -11,7 +11,19 @@ class UnobservedResize {
   }
 }
 
-globalThis.ResizeObserver ??= UnobservedResize;
+/** Nothing comes into view: deferred views stay at their placeholder. */
+class UnseenIntersections extends Unobserved {
+  readonly root = null;
+  readonly rootMargin = '';
+  readonly scrollMargin = '';
+  readonly thresholds = [];
+  takeRecords(): [] {
+    return [];
+  }
+}
+
+globalThis.ResizeObserver ??= Unobserved;
+globalThis.IntersectionObserver ??= UnseenIntersections;
 globalThis.matchMedia ??= (media) =>
   Object.assign(new EventTarget(), {
     media,
