@@ -23,6 +23,10 @@ export interface LinkedCase {
 
 type Params = Readonly<Record<string, string | undefined>>;
 
+function isFinished(amount: string): boolean {
+  return typedNumber(amount) !== undefined && amountFault(amount) === undefined;
+}
+
 const number = z.string().transform((text, context) => {
   const value = typedNumber(text);
   if (value !== undefined) return value;
@@ -30,7 +34,7 @@ const number = z.string().transform((text, context) => {
   return z.NEVER;
 });
 const row = z
-  .tuple([slug, z.string().refine((amount) => amountFault(amount) === undefined), z.enum(['l', 'h'])])
+  .tuple([slug, z.string().refine(isFinished), z.enum(['l', 'h'])])
   .transform(([id, amount, group]): SlateRow => ({
     id,
     amount,
@@ -119,7 +123,7 @@ export function readLink(params: Params, start: DeskCase, isKnown: (id: string) 
 
 /** The query that restores this case. Rows whose amount cannot be read are left out; SI units, whoever looks. */
 export function writeLink(deskCase: DeskCase): Record<string, string> {
-  const rows = deskCase.rows.filter(({ amount }) => amountFault(amount) === undefined);
+  const rows = deskCase.rows.filter(({ amount }) => isFinished(amount));
   const chosen = Object.values(deskCase.correlations);
   return {
     slate: rows.map(({ id, amount, group }) => `${id}:${typedNumber(amount)}:${group[0]}`).join(','),

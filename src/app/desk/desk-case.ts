@@ -63,9 +63,9 @@ export function typedNumber(text: string): number | undefined {
   return Number.isFinite(value) ? value : undefined;
 }
 
-/** What is wrong with a row's amount, in words; undefined when nothing is. */
+/** What is wrong with a row's amount, in words; undefined when nothing is. One that is still missing counts as none. */
 export function amountFault(amount: string): string | undefined {
-  if (amount.trim() === '') return 'Type an amount.';
+  if (amount.trim() === '') return undefined;
   const value = typedNumber(amount);
   if (value === undefined) return 'Write a number, such as 97.1.';
   if (value < 0) return 'An amount cannot be negative.';
