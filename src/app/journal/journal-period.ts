@@ -4,7 +4,7 @@ export const periods = [
   { period: 'week', label: 'Last 7 days' },
   { period: 'month', label: 'Last 30 days' },
   { period: 'all', label: 'All time' },
-  { period: 'days', label: 'Between two days' },
+  { period: 'days', label: 'Chosen days' },
 ] as const;
 export type Period = (typeof periods)[number]['period'];
 
