@@ -82,16 +82,26 @@ function wagner(
 export interface VapourPressure {
   readonly component: string;
   readonly row: VapourPressureRow;
-  /** ln(Psat/Pa) and slope at T [K]. */
-  at(T: number): LogPressure;
-  warning(T: number): EquilibriumWarning | undefined;
-  /** Highest temperature the correlation (or its stand-in) has a value at [K]. */
+  /** Highest temperature at which it has a value [K]. */
   readonly highest: number;
+  /** ln(Psat/Pa) and slope at T [K]; NaN above `highest`. */
+  at(T: number): LogPressure;
+  /** The row that is used at T, the stand-in where it steps in. */
+  rowAt(T: number): VapourPressureRow;
+  /** @throws EquilibriumError where there is no value */
+  evaluate(T: number): {
+    readonly pressure: number;
+    readonly row: VapourPressureRow;
+    readonly inRange: boolean;
+  };
+  warning(T: number): EquilibriumWarning | undefined;
 }
 
 /**
  * Chooses a component's correlation. Without `rowId` it is the rank 1 row, and above that row's critical temperature the
  * DIPPR 101 row, which still evaluates there; an asked-for row is used as it is.
+ *
+ * @throws EquilibriumError for an unknown component or row
  */
 export function vapourPressureOf(componentId: string, rowId?: string): VapourPressure {
   componentById(componentId);
@@ -104,22 +114,32 @@ export function vapourPressureOf(componentId: string, rowId?: string): VapourPre
     );
   const standIn =
     rowId === undefined ? rows.find((candidate) => candidate.equation === 'dippr_101') : undefined;
+  const end = row.criticalTemperature ?? Infinity;
+  const rowAt = (T: number) => (T > end && standIn ? standIn : row);
+  const inRange = (T: number) => T >= rowAt(T).low && T <= rowAt(T).high;
+  const at = (T: number) => logPressure(rowAt(T), T);
   return {
     component: componentId,
     row,
-    highest: standIn ? Infinity : (row.criticalTemperature ?? Infinity),
-    at: (T) => {
-      const direct = logPressure(row, T);
-      return Number.isNaN(direct.value) && standIn ? logPressure(standIn, T) : direct;
+    highest: standIn ? Infinity : end,
+    at,
+    rowAt,
+    evaluate: (T) => {
+      const pressure = Math.exp(at(T).value);
+      if (!(T > 0) || !Number.isFinite(pressure))
+        throw new EquilibriumError(
+          'bad-input',
+          `${rowAt(T).id} has no value at ${T} K; it is stated for ${row.low} to ${row.high} K.`,
+        );
+      return { pressure, row: rowAt(T), inRange: inRange(T) };
     },
-    warning: (T) => {
-      const used = standIn && Number.isNaN(logPressure(row, T).value) ? standIn : row;
-      if (T >= used.low && T <= used.high) return undefined;
-      return {
-        code: 'correlation-out-of-range',
-        component: componentId,
-        message: `${componentId}: ${used.id} is stated for ${used.low} to ${used.high} K and is used at ${T.toFixed(2)} K.`,
-      };
-    },
+    warning: (T) =>
+      inRange(T)
+        ? undefined
+        : {
+            code: 'correlation-out-of-range',
+            component: componentId,
+            message: `${componentId}: ${rowAt(T).id} is stated for ${rowAt(T).low} to ${rowAt(T).high} K and is used at ${T.toFixed(2)} K.`,
+          },
   };
 }

@@ -37,7 +37,8 @@ afterAll(() => worst.print('thermo, chemicals, CoolProp'));
 
 const of = (...calcs: string[]) =>
   cases.filter((check) => calcs.includes(check.calc)).map((check) => ({ name: check.id, check }));
-const methodOf = (check: Case) => (check.method === 'PR' ? 'peng-robinson' : 'ideal');
+const methodOf = (check: Case): 'ideal' | 'peng-robinson' =>
+  check.method === 'PR' ? 'peng-robinson' : 'ideal';
 const correlationsOf = (check: Case) =>
   check.vapour_pressure_rows &&
   Object.fromEntries(check.components.map((id, i) => [id, check.vapour_pressure_rows![i]!]));
