@@ -2,6 +2,7 @@ import { HttpTestingController } from '@angular/common/http/testing';
 import { TestBed, type ComponentFixture } from '@angular/core/testing';
 import { Router } from '@angular/router';
 import { sessionPath } from '@shared/api/session';
+import { SessionStore } from '../core/session';
 import { aSession, loadTestSession, provideTestCore } from '../core/testing';
 import { SignIn } from './sign-in';
 
@@ -107,5 +108,18 @@ describe('signing in', () => {
     fixture.componentRef.setInput('expired', 'true');
     await fixture.whenStable();
     expect(page().querySelector('[role=status]')?.textContent).toContain('Your session has ended');
+  });
+
+  it('tries to reach the server again, and goes on where a session still stands', async () => {
+    const session = TestBed.inject(SessionStore);
+    const failed = session.load();
+    http.expectOne({ method: 'GET', url: sessionPath }).error(new ProgressEvent('error'));
+    await failed;
+    await fixture.whenStable();
+    expect(page().querySelector('[role=alert]')?.textContent).toContain('The server cannot be reached');
+
+    page().querySelector<HTMLButtonElement>('button.again')?.click();
+    http.expectOne({ method: 'GET', url: sessionPath }).flush(aSession());
+    await vi.waitFor(() => expect(router.url).toBe('/board'));
   });
 });

@@ -51,6 +51,12 @@ export class SignIn {
     password.select();
   }
 
+  /** The server was away when the page opened; the session may still stand once it is back. */
+  protected async tryAgain(): Promise<void> {
+    await this.session.load();
+    if (this.session.user()) await this.router.navigateByUrl(ownAddress(this.returnUrl()));
+  }
+
   protected watchCapsLock(event: KeyboardEvent): void {
     // A password manager fills fields with key events that lack this function.
     this.capsLock.set(event.getModifierState?.('CapsLock') ?? false);
