@@ -1,12 +1,17 @@
 /** Every published source once, by key; docstrings, data, tests and screens cite the key. */
 export const references = {
+  cao1995:
+    'Cao and Rhinehart, An efficient method for on-line identification of steady state, J. Process Control 5 (1995) 363-374',
   crc2014: 'CRC Handbook of Chemistry and Physics, 95th ed. 2014',
+  harvey1989: 'Harvey, Forecasting, Structural Time Series Models and the Kalman Filter, Cambridge 1989',
   hankinson1979: 'COSTALD: Hankinson and Thomson, AIChE J. 25 (1979) 653-663',
   horstmann2005: 'PSRK Revision 4 appendix: Horstmann et al., Fluid Phase Equilib. 227 (2005) 157',
   huber2022: 'NIST REFPROP constants as listed by Huber et al., Ind. Eng. Chem. Res. 61 (2022) 15449',
   iapws95: 'IAPWS-95, the International Association for the Properties of Water and Steam',
   iec60751: 'IEC 60751, industrial platinum resistance thermometers: tolerance classes',
   gum: 'JCGM 100:2008, Guide to the expression of uncertainty in measurement',
+  kalman1960:
+    'Kalman, A new approach to linear filtering and prediction problems, J. Basic Eng. 82 (1960) 35-45',
   knapp1982:
     'DECHEMA Chemistry Data Series vol. VI (Knapp et al. 1982), as in the ChemSep file of DECHEMA Peng-Robinson parameters',
   mcgarry1983: 'McGarry, Ind. Eng. Chem. Process Des. Dev. 22 (1983) 313-322',

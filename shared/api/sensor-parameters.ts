@@ -71,6 +71,16 @@ export const sensorParameters = z.object({
     differentialPressureLimit: positive.optional(),
     /** After this long without a used sample the value is Uncertain. */
     sampleAgeHours: positive,
+    /** Components whose correlation may be used outside its range, as the engineer has decided at set-up. */
+    acceptedExtrapolations: z.array(slug).default([]),
+    /** Ratio of variances above which the tower is called not steady, and below which it is steady again. */
+    steadiness: z
+      .object({ transientAbove: positive, steadyBelow: positive })
+      .refine(
+        ({ transientAbove, steadyBelow }) => steadyBelow < transientAbove,
+        'the lower ratio must lie below the upper',
+      )
+      .optional(),
   }),
   limits: z.object({
     high: moleFraction.optional(),

@@ -20,14 +20,8 @@ export interface SteadinessParameters {
   readonly steadyBelow: number;
 }
 
-/** Factors of the 1995 paper; two thresholds keep the verdict from flapping (upper value from memory, common practice). */
-export const usualSteadiness: SteadinessParameters = {
-  lambda1: 0.2,
-  lambda2: 0.1,
-  lambda3: 0.1,
-  transientAbove: 3,
-  steadyBelow: 1.44,
-};
+/** Filter factors of the 1995 paper. @source cao1995 */
+export const usualFilters = { lambda1: 0.2, lambda2: 0.1, lambda3: 0.1 } as const;
 
 export function startSteadiness(x: number): SteadinessState {
   return { filtered: x, variance: 0, difference: 0, last: x, isSteady: true };

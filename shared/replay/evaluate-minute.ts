@@ -6,12 +6,7 @@ import { bandOf, standardUncertainty } from '../inference/band';
 import type { Inference } from '../inference/inference';
 import { judgeReading, noMemory, type Reading, type TagMemory } from '../inference/judge-readings';
 import { qualityOf, type QualityReason } from '../inference/quality';
-import {
-  startSteadiness,
-  stepSteadiness,
-  usualSteadiness,
-  type SteadinessState,
-} from '../inference/steadiness';
+import { startSteadiness, stepSteadiness, usualFilters, type SteadinessState } from '../inference/steadiness';
 import { EquilibriumError } from '../vle/errors';
 import { stepRundown, type RundownState } from './rundown';
 
@@ -106,11 +101,12 @@ export function evaluateMinute(
   let inferred: Inferred | undefined;
   if (temperature.value !== null && pressure.value !== null) {
     inferred = inferMinute(sensor, knowledge, offsetVariance, temperature.value, pressure.value, reasons);
-    if (inferred && t % (steadinessMinutes * minute) === 0) {
+    const thresholds = parameters.validity.steadiness;
+    if (inferred && thresholds && t % (steadinessMinutes * minute) === 0) {
       const compensated =
         temperature.value - inferred.slope * (pressure.value - middle(parameters.validity.pressure));
       steadiness = steadiness
-        ? stepSteadiness(steadiness, compensated, usualSteadiness).state
+        ? stepSteadiness(steadiness, compensated, { ...usualFilters, ...thresholds }).state
         : startSteadiness(compensated);
     }
   }
@@ -170,7 +166,9 @@ function inferMinute(
     );
     const { sensitivity } = result;
     if (result.clamped) reasons.push('clamped');
-    if (result.warnings.length > 0) reasons.push('correlation-out-of-range');
+    const { acceptedExtrapolations } = parameters.validity;
+    if (result.warnings.some((warning) => !acceptedExtrapolations.includes(warning.component)))
+      reasons.push('correlation-out-of-range');
     const deviation = standardUncertainty(value, {
       byTemperature: sensitivity.temperature,
       byPressure: sensitivity.pressure,
