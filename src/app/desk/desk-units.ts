@@ -56,6 +56,15 @@ export function pressureUnits(barometricPressure: number): readonly [TypedUnit, 
   return [...counted('abs'), ...counted('gauge')] as [TypedUnit, ...TypedUnit[]];
 }
 
+/** Units of a difference of pressures, which counts from nothing. */
+export const pressureChangeUnits = pressureScales.map(({ name, pascals, step, decimals }): TypedUnit => ({
+  label: name,
+  toShown: (value) => value / pascals,
+  fromShown: (shown) => shown * pascals,
+  step,
+  decimals: decimals + 1,
+})) as [TypedUnit, ...TypedUnit[]];
+
 /** The unit of this label, else the first. */
 export function unitLabelled(label: string, units: readonly [TypedUnit, ...TypedUnit[]]): TypedUnit {
   return units.find((unit) => unit.label === label) ?? units[0];

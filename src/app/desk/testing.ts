@@ -1,3 +1,4 @@
+import { sensorParameters } from '@shared/api/sensor-parameters';
 import type { Estimate, Sensor, SensorDetail } from '@shared/api/sensors';
 import { testNow } from '../core/testing';
 
@@ -46,7 +47,7 @@ export function aSensorDetail(change: Partial<SensorDetail> = {}): SensorDetail 
       id: 3,
       number: 2,
       madeLiveAt: testNow - 86_400_000,
-      parameters: {
+      parameters: sensorParameters.parse({
         relation: 'dew',
         method: 'peng-robinson',
         correlations: {},
@@ -82,7 +83,7 @@ export function aSensorDetail(change: Partial<SensorDetail> = {}): SensorDetail 
           sampleAgeHours: 24,
         },
         limits: { high: 0.025, target: 0.02, temperatureStep: 0.5 },
-      },
+      }),
     },
     ...change,
   };
