@@ -21,6 +21,12 @@ export const routes: Routes = [
         loadComponent: async () => (await import('./board/board')).Board,
       },
       {
+        path: 'desk',
+        title: 'Equilibrium desk',
+        canActivate: [allowed('look')],
+        loadComponent: async () => (await import('./desk/desk')).Desk,
+      },
+      {
         path: 'journal',
         title: 'Journal',
         canActivate: [allowed('look')],

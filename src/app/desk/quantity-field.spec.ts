@@ -68,7 +68,15 @@ describe('a quantity field', () => {
     const { choose, text, edited } = await aField();
     await choose('°F');
     expect(text().value).toBe('122');
-    expect(edited).toEqual([323.15]);
+    expect(edited).toEqual([]);
+  });
+
+  it('goes back to the value when a unit is chosen while what stands there is none', async () => {
+    const { type, choose, text, edited } = await aField();
+    await type('x');
+    await choose('K');
+    expect(text().value).toBe('323.15');
+    expect(edited).toEqual([null, 323.15]);
   });
 
   it('says in words what is wrong, and gives no value then', async () => {

@@ -66,9 +66,10 @@ export class QuantityField {
   }
 
   protected chooseUnit(label: string): void {
+    const wasFaulty = this.fault() !== '';
     this.unitLabel.set(label);
     // What stood there and was no number has given way to the value in the new unit.
-    this.edited.emit(this.value());
+    if (wasFaulty) this.edited.emit(this.value());
   }
 
   protected slide(shown: string): void {

@@ -1,4 +1,4 @@
-import { mdiNotebookOutline, mdiTestTube, mdiViewDashboardOutline } from '@mdi/js';
+import { mdiNotebookOutline, mdiScaleBalance, mdiTestTube, mdiViewDashboardOutline } from '@mdi/js';
 import type { Permission } from '@shared/api/permissions';
 
 /** One entry of the menu: a screen that exists, and the permission it takes to see it. */
@@ -20,6 +20,7 @@ export const menu: readonly MenuEntry[] = [
     covers: ['/towers'],
   },
   { path: '/samples', label: 'Samples', glyph: mdiTestTube, permission: 'look' },
+  { path: '/desk', label: 'Equilibrium desk', glyph: mdiScaleBalance, permission: 'look' },
   { path: '/journal', label: 'Journal', glyph: mdiNotebookOutline, permission: 'look' },
 ];
 
