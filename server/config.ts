@@ -11,11 +11,13 @@ const yesOrNo = z
   .default('0')
   .transform((word) => word === '1' || word === 'true');
 
+const dataDir = z.string().min(1).default('.data');
+
 const environment = z
   .object({
     PORT: port.default(4600),
     HOST: z.string().min(1).default('127.0.0.1'),
-    DATA_DIR: z.string().min(1).default('.data'),
+    DATA_DIR: dataDir,
     CLIENT_DIR: z.string().min(1).default('dist/client'),
     SESSION_SECRET: z.string().min(32, 'must have at least 32 characters').optional(),
     BEHIND_TLS_PROXY: yesOrNo,
@@ -69,6 +71,11 @@ export function readConfig(env: Readonly<Record<string, string | undefined>>): C
     logLevel: settings.LOG_LEVEL,
     demo: settings.DEMO,
   };
+}
+
+/** The data folder alone, for programs that need no other setting. */
+export function readDataDir(env: Readonly<Record<string, string | undefined>>): string {
+  return resolve(dataDir.parse(env['DATA_DIR']));
 }
 
 /** Files under the data folder. */

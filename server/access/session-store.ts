@@ -52,18 +52,22 @@ export class SessionStore extends SequelizeStore {
   }
 
   override set(sid: string, data: SessionData, callback?: (error?: unknown) => void): void {
-    this.#known.delete(sid);
+    // Ended while a request of it was still on its way: that must not bring it back. Ids are never given twice.
+    if (this.#known.get(sid)?.data === null) {
+      callback?.();
+      return;
+    }
+    // At once, because the next request may come before the write has ended.
+    this.#known.set(sid, { data: JSON.stringify(data), readAt: this.clock.now() });
     super.set(sid, data, (error?: unknown) => {
-      this.#known.delete(sid); // read again by somebody while the write was under way
+      if (error) this.#known.delete(sid);
       callback?.(error);
     });
   }
 
   override destroy(sid: string, callback?: (error?: unknown) => void): void {
-    super.destroy(sid, (error?: unknown) => {
-      this.#known.set(sid, { data: null, readAt: this.clock.now() });
-      callback?.(error);
-    });
+    this.#known.set(sid, { data: null, readAt: this.clock.now() });
+    super.destroy(sid, callback);
   }
 
   /** Being asked something is not written down here: see `noteSeen`. */
