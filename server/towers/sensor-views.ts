@@ -194,8 +194,14 @@ export class SensorViews {
     return row;
   }
 
-  #newestRow(id: string): Promise<EstimateRow | null> {
-    return this.database.models.estimates.findOne({ where: { sensorId: id }, order: [['t', 'DESC']] });
+  async #newestRow(id: string): Promise<EstimateRow | null> {
+    // Not findOne: seeing a column of the key in `where`, it leaves the LIMIT out and reads every minute there is.
+    const [newest] = await this.database.models.estimates.findAll({
+      where: { sensorId: id },
+      order: [['t', 'DESC']],
+      limit: 1,
+    });
+    return newest ?? null;
   }
 
   async #toApi(row: SensorRow, live: LiveSensor | undefined): Promise<Sensor> {
