@@ -30,7 +30,7 @@ export class SiteSimulation {
   readonly seed: number;
   readonly records: readonly TowerRecord[];
   readonly weather: Weather;
-  readonly #towers: readonly TowerSimulation[];
+  readonly towers: readonly TowerSimulation[];
   /** The minute the towers have reached [UTC ms]. */
   #reached: number;
 
@@ -41,7 +41,7 @@ export class SiteSimulation {
     this.startAt = startAt;
     this.seed = seed;
     this.weather = new Weather(seed);
-    this.#towers = towers.map((spec) => new TowerSimulation(spec, seed));
+    this.towers = towers.map((spec) => new TowerSimulation(spec, seed));
     this.records = towers.map((spec) => ({
       spec,
       readings: new MinuteTable(spec.instruments.length),
@@ -61,7 +61,7 @@ export class SiteSimulation {
       this.weather.nextMinute(this.#reached);
       this.#reached += minute;
       const isKept = this.#reached >= this.startAt;
-      this.#towers.forEach((tower, i) => {
+      this.towers.forEach((tower, i) => {
         tower.nextMinute(this.weather);
         if (isKept) this.#keep(tower, this.records[i]!);
       });
@@ -75,7 +75,7 @@ export class SiteSimulation {
 
   /** Largest difference between what went into a tower and what came out or stayed, relative to what went in. */
   worstImbalance(): number {
-    return Math.max(...this.#towers.map((tower) => tower.worstImbalance()));
+    return Math.max(...this.towers.map((tower) => tower.worstImbalance()));
   }
 
   #keep(tower: TowerSimulation, { readings, truth }: TowerRecord): void {
