@@ -22,6 +22,9 @@ const believeFor = 5000;
 
 const hour = 3600_000;
 
+/** Longer than any request takes. */
+const rememberEndFor = hour;
+
 const SequelizeStore = connectSessionSequelize(session.Store);
 
 interface Known {
@@ -35,6 +38,11 @@ interface Known {
  */
 export class SessionStore extends SequelizeStore {
   readonly #known = new Map<string, Known>();
+
+  /**
+   * Sessions ended lately: a request of one that is still on its way must not write it back. Ids are never given twice.
+   */
+  readonly #ended = new Map<string, number>();
 
   constructor(
     private readonly file: SessionsDatabase,
@@ -52,8 +60,7 @@ export class SessionStore extends SequelizeStore {
   }
 
   override set(sid: string, data: SessionData, callback?: (error?: unknown) => void): void {
-    // Ended while a request of it was still on its way: that must not bring it back. Ids are never given twice.
-    if (this.#known.get(sid)?.data === null) {
+    if (this.#ended.has(sid)) {
       callback?.();
       return;
     }
@@ -61,12 +68,14 @@ export class SessionStore extends SequelizeStore {
     this.#known.set(sid, { data: JSON.stringify(data), readAt: this.clock.now() });
     super.set(sid, data, (error?: unknown) => {
       if (error) this.#known.delete(sid);
-      callback?.(error);
+      if (this.#ended.has(sid)) super.destroy(sid, callback);
+      else callback?.(error);
     });
   }
 
   override destroy(sid: string, callback?: (error?: unknown) => void): void {
-    this.#known.set(sid, { data: null, readAt: this.clock.now() });
+    this.#ended.set(sid, this.clock.now());
+    this.#known.delete(sid);
     super.destroy(sid, callback);
   }
 
@@ -106,6 +115,7 @@ export class SessionStore extends SequelizeStore {
   async clearExpired(): Promise<number> {
     const now = this.clock.now();
     for (const [sid, known] of this.#known) if (now - known.readAt > believeFor) this.#known.delete(sid);
+    for (const [sid, endedAt] of this.#ended) if (now - endedAt > rememberEndFor) this.#ended.delete(sid);
     return this.file.sessions.destroy({ where: { expires: { [Op.lte]: now } } });
   }
 
@@ -118,7 +128,7 @@ export class SessionStore extends SequelizeStore {
       known = { data, readAt: now };
       this.#known.set(sid, known);
     }
-    if (known.data === null) return null;
+    if (known.data === null || this.#ended.has(sid)) return null;
     const data = JSON.parse(known.data) as SessionData;
     return this.expiration(data).getTime() > now ? data : null;
   }

@@ -11,6 +11,8 @@ const hashed = /-[A-Z0-9]{8}\.[a-z0-9]+$/;
 export function clientFiles(folder: string): Router {
   const router = Router();
   const page = readPage(folder);
+  // Before the files, among which it lies with its placeholder.
+  router.get('/index.html', (_req, res) => sendPage(res, page()));
   router.use(
     express.static(folder, {
       index: false,
@@ -25,8 +27,7 @@ export function clientFiles(folder: string): Router {
   );
   router.get('/{*address}', (req, res) => {
     // A file that is not there must not look like a page: a browser would run it as a script and fail oddly.
-    if (/\.[a-z0-9]+$/i.test(req.path) && req.path !== '/index.html')
-      throw new Problem(404, 'not-found', 'There is no such file.');
+    if (/\.[a-z0-9]+$/i.test(req.path)) throw new Problem(404, 'not-found', 'There is no such file.');
     sendPage(res, page());
   });
   return router;

@@ -1,6 +1,6 @@
 import { createHash } from 'node:crypto';
 import type { JournalEntry, journalPage, journalQuery } from '@shared/api/journal';
-import { Op, type Transaction, type WhereOptions } from 'sequelize';
+import { col, fn, Op, where, type Transaction, type WhereOptions } from 'sequelize';
 import type * as z from 'zod';
 import type { Database } from '../db/database';
 import type { JournalEntryRow } from '../db/models/journal-entry-row';
@@ -129,10 +129,10 @@ function conditions(query: z.infer<typeof journalQuery>): WhereOptions<JournalEn
   if (query.kind !== undefined) found.push({ subjectKind: query.kind });
   if (query.subjectId !== undefined) found.push({ subjectId: query.subjectId });
   if (query.search) {
-    const pattern = { [Op.substring]: query.search };
-    found.push({
-      [Op.or]: [{ subjectName: pattern }, { reason: pattern }, { action: pattern }, { userName: pattern }],
-    });
+    // Not LIKE, to which `%` and `_` mean anything.
+    const holds = (column: string) =>
+      where(fn('instr', fn('lower', col(column)), fn('lower', query.search)), Op.gt, 0);
+    found.push({ [Op.or]: ['subject_name', 'reason', 'action', 'user_name'].map(holds) });
   }
   return found;
 }
