@@ -12,9 +12,11 @@ import { sensorsPath, trend, type Sensor } from '@shared/api/sensors';
 import { Clock } from '../core/clock';
 import { Live } from '../core/live';
 import { Quantities } from '../ui/quantities';
+import { sparkMeans } from '../ui/spark-path';
 import { Sparkline } from '../ui/sparkline';
 
 const spanMs = 8 * 3_600_000;
+const stretchMs = 12 * 60_000;
 
 interface Series {
   readonly t: readonly number[];
@@ -27,10 +29,10 @@ interface Series {
   imports: [Sparkline],
   changeDetection: ChangeDetectionStrategy.OnPush,
   template: `
-    @if (series(); as series) {
+    @if (line(); as line) {
       <app-sparkline
-        [t]="series.t"
-        [value]="series.value"
+        [t]="line.t"
+        [value]="line.value"
         [from]="to() - spanMs"
         [to]="to()"
         [limit]="sensor().limits.high ?? sensor().limits.low"
@@ -64,7 +66,7 @@ export class BoardHistory {
     () => {
       this.live.gaps(); // what the stream missed is read again
       const to = untracked(this.clock.minute);
-      return { url: `${sensorsPath}/${this.id()}/trend`, params: { from: to - spanMs, to, points: 60 } };
+      return { url: `${sensorsPath}/${this.id()}/trend`, params: { from: to - spanMs, to, points: 120 } };
     },
     { parse: trend.parse },
   );
@@ -78,6 +80,10 @@ export class BoardHistory {
     }),
     computation: ({ read, latest }, previous) =>
       withMinute(read && read !== previous?.source.read ? read : previous?.value, latest),
+  });
+  protected readonly line = computed(() => {
+    const series = this.series();
+    return series && sparkMeans(series.t, series.value, stretchMs);
   });
   protected readonly to = computed(() => Math.max(this.clock.minute(), this.sensor().latest?.t ?? 0));
   protected readonly label = computed(() => {

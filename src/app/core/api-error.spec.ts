@@ -3,7 +3,7 @@ import { describeFailure } from './api-error';
 
 const document = {
   type: 'about:blank',
-  title: 'The sample was not taken',
+  title: 'Unprocessable Content',
   status: 422,
   detail: 'The fractions add up to 0.91.',
   instance: 'req-1',
@@ -13,8 +13,9 @@ const document = {
 describe('a failed request in words', () => {
   it('passes on what a problem document says, with its fields and the request’s id', () => {
     expect(describeFailure(new HttpErrorResponse({ status: 422, error: document }))).toEqual({
-      title: 'The sample was not taken',
+      title: 'The server refused',
       detail: 'The fractions add up to 0.91.',
+      words: 'The fractions add up to 0.91.',
       status: 422,
       fields: { fractions: 'The sum must lie between 0.98 and 1.02.' },
       requestId: 'req-1',
@@ -28,7 +29,11 @@ describe('a failed request in words', () => {
 
   it('says that the server cannot be reached when there is no answer', () => {
     const failure = describeFailure(new HttpErrorResponse({ status: 0, error: new ProgressEvent('error') }));
-    expect(failure).toMatchObject({ title: 'The server cannot be reached', status: 0 });
+    expect(failure).toMatchObject({
+      status: 0,
+      words:
+        'The server cannot be reached. Check that this computer is on the plant network, then try again.',
+    });
   });
 
   it('names the status where a page of something in between answered', () => {

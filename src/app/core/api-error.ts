@@ -7,6 +7,8 @@ export interface ApiFailure {
   readonly title: string;
   /** What can be done about it. */
   readonly detail: string;
+  /** All of it in a sentence or two, for where there is no heading: the server's own words alone where it gave any. */
+  readonly words: string;
   /** HTTP status; 0 when no answer came at all. */
   readonly status: number;
   /** Field path to sentence, where single fields were at fault; empty otherwise. */
@@ -22,33 +24,39 @@ export function describeFailure(error: unknown): ApiFailure {
   const document = readProblem(error.error);
   if (document)
     return {
-      title: document.title,
+      // The document's own title is the protocol's word for the status ("Unauthorized"), which tells a person nothing.
+      title: error.status >= 500 ? 'The server could not do it' : 'The server refused',
       detail: document.detail,
+      words: document.detail,
       status: error.status,
       fields: document.errors ?? {},
       requestId: document.instance,
     };
-  return {
+  return withWords({
     title: 'The server could not answer',
     detail: `It answered with status ${error.status}. Try again; if it stays so, tell your administrator.`,
     status: error.status,
     fields: {},
-  };
+  });
 }
 
-const noAnswer: ApiFailure = {
+const noAnswer = withWords({
   title: 'The server cannot be reached',
   detail: 'Check that this computer is on the plant network, then try again.',
   status: 0,
   fields: {},
-};
+});
 
-const brokenAnswer: ApiFailure = {
+const brokenAnswer = withWords({
   title: 'The answer was not understood',
   detail: 'This page may be older than the server: reload it. If it stays so, tell your administrator.',
   status: 200,
   fields: {},
-};
+});
+
+function withWords(failure: Omit<ApiFailure, 'words'>): ApiFailure {
+  return { ...failure, words: `${failure.title}. ${failure.detail}` };
+}
 
 function readProblem(body: unknown): ProblemDocument | undefined {
   const parsed = problem.safeParse(typeof body === 'string' ? parseJson(body) : body);

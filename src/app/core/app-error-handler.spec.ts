@@ -29,9 +29,9 @@ describe('what no screen expected', () => {
       status: 503,
       error: { type: 'about:blank', title: 'Busy', status: 503, detail: 'Try again in a minute.' },
     });
-    expect(told(answer)).toBe('Busy. Try again in a minute.');
+    expect(told(answer)).toBe('Try again in a minute.');
     expect(told(Object.assign(new Error('Uncaught (in promise)'), { rejection: answer }))).toBe(
-      'Busy. Try again in a minute.',
+      'Try again in a minute.',
     );
   });
 

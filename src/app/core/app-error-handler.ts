@@ -16,10 +16,7 @@ export class AppErrorHandler implements ErrorHandler {
 
 function wordsFor(error: unknown): string {
   const cause = rejectionOf(error);
-  if (cause instanceof HttpErrorResponse) {
-    const failure = describeFailure(cause);
-    return `${failure.title}. ${failure.detail}`;
-  }
+  if (cause instanceof HttpErrorResponse) return describeFailure(cause).words;
   // A screen's code is fetched on demand; after an update of the server the old file names are gone.
   if (cause instanceof Error && /dynamically imported module|module script failed/i.test(cause.message))
     return 'This screen could not be loaded. Dewmark may have been updated: reload the page.';

@@ -64,7 +64,7 @@ export class SessionStore {
       const failure = describeFailure(error);
       // 401: the server had ended it already, which is what was asked for.
       if (failure.status !== 401) {
-        this.notices.warn(`You are still signed in. ${failure.title}. ${failure.detail}`);
+        this.notices.warn(`You are still signed in. ${failure.words}`);
         return;
       }
     }

@@ -9,7 +9,7 @@ const shown = {
 
 describe('an entry of the record in words', () => {
   it('reads an action this page knows, and one it does not know yet', () => {
-    expect(actionPhrase('sample-entered')).toBe('entered the sample');
+    expect(actionPhrase('sample-entered')).toBe('entered a sample of');
     expect(actionPhrase('baseline-set')).toBe('baseline set:');
   });
 

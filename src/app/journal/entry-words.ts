@@ -3,11 +3,11 @@ import { formatNumber } from '../ui/numbers';
 
 /** What happened, so that "who phrase subject" reads as a sentence. */
 const phrases: Readonly<Record<string, string>> = {
-  'sample-entered': 'entered the sample',
-  'sample-used': 'used the sample',
-  'sample-held': 'held the sample',
-  'sample-accepted': 'accepted the held sample',
-  'sample-rejected': 'rejected the sample',
+  'sample-entered': 'entered a sample of',
+  'sample-used': 'used a sample for',
+  'sample-held': 'held a sample for',
+  'sample-accepted': 'accepted a held sample for',
+  'sample-rejected': 'rejected a sample for',
   'note-written': 'noted on',
   'tower-created': 'set up the tower',
   'sensor-created': 'set up the sensor',

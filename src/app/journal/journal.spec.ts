@@ -57,7 +57,7 @@ describe('the Journal', () => {
         t: Date.UTC(2026, 11, 2, 3, 30),
         user: null,
         action: 'sample-used',
-        subject: { kind: 'sample', id: '88', name: 'Overhead sample' },
+        subject: { kind: 'sample', id: '88', name: 'C4+ in propane' },
         changes: [{ field: 'offset', from: -0.12, to: 0.05, unit: 'K' }],
         reason: '',
       }),
@@ -70,7 +70,7 @@ describe('the Journal', () => {
     expect(days[0]).toContain('Cloudburst, condenser cold.');
     expect(days[1]).toContain('Tuesday, 1 December 2026, AST');
     expect(days[1]).toContain('23:30');
-    expect(days[1]).toContain('Dewmark used the sample Overhead sample');
+    expect(days[1]).toContain('Dewmark used a sample for C4+ in propane');
     expect(days[1]).toMatch(/offset\s*\u22120.12.* to \s*0.05/);
   });
 

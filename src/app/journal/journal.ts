@@ -136,8 +136,7 @@ export class Journal {
       if (asked === this.params())
         this.older.update((older) => ({ items: [...(older?.items ?? []), ...page.items], next: page.next }));
     } catch (error) {
-      const failure = describeFailure(error);
-      this.notices.warn(`Older entries could not be read. ${failure.title}. ${failure.detail}`);
+      this.notices.warn(`Older entries could not be read. ${describeFailure(error).words}`);
     } finally {
       this.isReadingOlder.set(false);
     }

@@ -12,7 +12,7 @@ import { Glyph } from './glyph';
   host: { role: 'alert' },
   template: `
     <p class="title"><app-glyph [path]="mdiAlertOctagonOutline" /> {{ what() }} could not be read</p>
-    <p>{{ failure().title }}. {{ failure().detail }}</p>
+    <p>{{ failure().words }}</p>
     @if (failure().requestId; as id) {
       <p class="soft">
         Request <span class="num">{{ id }}</span>

@@ -1,4 +1,4 @@
-import { sparkPath, sparkRange } from './spark-path';
+import { sparkMeans, sparkPath, sparkRange } from './spark-path';
 
 describe('the line of a sparkline', () => {
   it('runs from left to right, higher values nearer the top', () => {
@@ -33,5 +33,12 @@ describe('the line of a sparkline', () => {
     expect(sparkRange([null], 0.02)).toEqual({ low: 0, high: 1 });
     const { low, high } = sparkRange([0, 0], null);
     expect(high).toBeGreaterThan(low);
+  });
+
+  it('shows the mean of a stretch, and leaves a stretch without any value a gap', () => {
+    expect(sparkMeans([0, 4, 10, 14, 20, 24], [1, 3, null, null, 5, null], 10)).toEqual({
+      t: [2, 12, 22],
+      value: [2, null, 5],
+    });
   });
 });

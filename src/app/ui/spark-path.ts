@@ -4,6 +4,33 @@ interface Point {
 }
 
 /**
+ * Means over stretches of time: what is drawn small shows where a value went, not each minute's noise. A stretch without any
+ * value stays a gap.
+ *
+ * @param stretchMs length of a stretch; each mean stands at the middle of its readings
+ */
+export function sparkMeans(
+  t: readonly number[],
+  values: readonly (number | null)[],
+  stretchMs: number,
+): { t: number[]; value: (number | null)[] } {
+  const stretches = new Map<number, { t: number[]; values: number[] }>();
+  t.forEach((time, index) => {
+    const key = Math.floor(time / stretchMs);
+    const stretch = stretches.get(key) ?? { t: [], values: [] };
+    stretches.set(key, stretch);
+    stretch.t.push(time);
+    const value = values[index] ?? null;
+    if (value !== null) stretch.values.push(value);
+  });
+  const means = [...stretches.values()];
+  return {
+    t: means.map((stretch) => mean(stretch.t)),
+    value: means.map((stretch) => (stretch.values.length > 0 ? mean(stretch.values) : null)),
+  };
+}
+
+/**
  * Lowest and highest value a sparkline shows. Never less than a quarter of the limit apart, or a tenth of the value where
  * there is none: noise is not to look like a storm.
  */
@@ -47,4 +74,8 @@ export function sparkPath(
 
 function rounded(place: number): number {
   return Math.round(place * 10) / 10;
+}
+
+function mean(values: readonly number[]): number {
+  return values.reduce((sum, value) => sum + value, 0) / values.length;
 }
