@@ -7,7 +7,7 @@ import {
   mixtureAt,
   phaseLines,
   saturationPoint,
-  then,
+  andThen,
 } from './desk-answer';
 
 const mixture: Mixture = {
@@ -93,7 +93,7 @@ describe('a question that has no answer', () => {
     const beyond = attempt(() => saturationPoint('dew', mixture, { pressure: 20e6 }));
     expect(beyond.kind).toBe('refused');
     expect(beyond).toHaveProperty('words', expect.stringContaining('Choose a lower pressure'));
-    expect(then(beyond, () => 1)).toBe(beyond);
+    expect(andThen(beyond, () => 1)).toBe(beyond);
   });
 
   it('that is a bug is thrown, not shown as if the person had asked wrongly', () => {

@@ -29,8 +29,11 @@ export function attempt<T>(ask: () => T): Outcome<T> {
   }
 }
 
-/** Asks on with what an outcome holds; a refusal stays what it was. */
-export function then<T, U>(outcome: Outcome<T>, ask: (value: T) => U): Outcome<U> {
+/**
+ * Asks on with what an outcome holds; a refusal stays what it was. (A module that exports a `then` could not be imported on
+ * demand: `await` would take it for a promise.)
+ */
+export function andThen<T, U>(outcome: Outcome<T>, ask: (value: T) => U): Outcome<U> {
   return outcome.kind === 'refused' ? outcome : attempt(() => ask(outcome.value));
 }
 

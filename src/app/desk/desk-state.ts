@@ -7,7 +7,7 @@ import {
   mixtureAt,
   phaseLines,
   saturationPoint,
-  then,
+  andThen,
   type Outcome,
 } from './desk-answer';
 import { impurityOf, type Answer, type DeskCase } from './desk-case';
@@ -15,6 +15,7 @@ import { pressureSpan, spanFor, temperatureSpan } from './desk-units';
 import { lastGood } from './last-good';
 import { groupFault } from './slate-edits';
 import { mixtureOf } from './slate-mixture';
+import { provenanceWords } from './slate-sources';
 import { caseOf, presetSlates } from './slates';
 
 /** Fields in which something stands that is no value yet. */
@@ -62,23 +63,23 @@ export class DeskState {
 
   private readonly bubbleAtPressureNow = computed(() => {
     const pressure = this.pressure();
-    return then(this.mixture(), (mixture) => bubblePoint(mixture, { pressure }));
+    return andThen(this.mixture(), (mixture) => bubblePoint(mixture, { pressure }));
   });
   private readonly dewAtPressureNow = computed(() => {
     const pressure = this.pressure();
-    return then(this.mixture(), (mixture) => dewPoint(mixture, { pressure }));
+    return andThen(this.mixture(), (mixture) => dewPoint(mixture, { pressure }));
   });
   private readonly bubbleAtTemperatureNow = computed(() => {
     const temperature = this.temperature();
-    return then(this.mixture(), (mixture) => bubblePoint(mixture, { temperature }));
+    return andThen(this.mixture(), (mixture) => bubblePoint(mixture, { temperature }));
   });
   private readonly dewAtTemperatureNow = computed(() => {
     const temperature = this.temperature();
-    return then(this.mixture(), (mixture) => dewPoint(mixture, { temperature }));
+    return andThen(this.mixture(), (mixture) => dewPoint(mixture, { temperature }));
   });
   private readonly flashNow = computed(() => {
     const at = { temperature: this.temperature(), pressure: this.pressure() };
-    return then(this.mixture(), (mixture) => flash(mixture, at));
+    return andThen(this.mixture(), (mixture) => flash(mixture, at));
   });
 
   readonly bubbleAtPressure = lastGood(this.bubbleAtPressureNow);
@@ -92,7 +93,7 @@ export class DeskState {
     computed(() => {
       const mixture = this.mixture();
       if (mixture.kind === 'refused') return mixture;
-      return then(this.outcomeOf(this.answer()), (result) => ({
+      return andThen(this.outcomeOf(this.answer()), (result) => ({
         result,
         lines: phaseLines(mixture.value, result),
       }));
@@ -105,7 +106,7 @@ export class DeskState {
     const fault = groupFault(rows);
     const mixture = this.mixture();
     if (mixture.kind === 'answered' && fault !== undefined) return { kind: 'refused', words: fault } as const;
-    return then(mixture, ({ method, correlations, components }) =>
+    return andThen(mixture, ({ method, correlations, components }) =>
       createInference({
         relation,
         method,
@@ -116,7 +117,7 @@ export class DeskState {
   });
   private readonly productNow = computed(() => {
     const [temperature, pressure, instruments] = [this.temperature(), this.pressure(), this.instruments()];
-    return then(this.inference(), (inference) =>
+    return andThen(this.inference(), (inference) =>
       inferredProduct(inference, temperature, pressure, instruments),
     );
   });
@@ -125,18 +126,18 @@ export class DeskState {
 
   private readonly targetMixture = computed(() => {
     const target = this.target();
-    return then(this.inference(), (inference) => mixtureAt(inference, target));
+    return andThen(this.inference(), (inference) => mixtureAt(inference, target));
   });
   readonly targetAtPressure = lastGood(
     computed(() => {
       const [relation, pressure] = [this.relation(), this.pressure()];
-      return then(this.targetMixture(), (mixture) => saturationPoint(relation, mixture, { pressure }));
+      return andThen(this.targetMixture(), (mixture) => saturationPoint(relation, mixture, { pressure }));
     }),
   );
   readonly targetAtTemperature = lastGood(
     computed(() => {
       const [relation, temperature] = [this.relation(), this.temperature()];
-      return then(this.targetMixture(), (mixture) => saturationPoint(relation, mixture, { temperature }));
+      return andThen(this.targetMixture(), (mixture) => saturationPoint(relation, mixture, { temperature }));
     }),
   );
 
@@ -149,6 +150,15 @@ export class DeskState {
       this.flashNow(),
       this.productNow(),
     ]),
+  );
+
+  /** Method and sources of every answer, in words. */
+  readonly provenance = computed(() =>
+    provenanceWords(
+      this.method(),
+      this.rows().map(({ id }) => id),
+      this.correlations(),
+    ),
   );
 
   /** The two components that the T–x–y plot is of: those chosen, else the two of which there is most. */

@@ -1,4 +1,5 @@
 import type { Method } from '@shared/vle/equilibrium';
+import type { VapourPressureRow } from '@shared/vle/vapour-pressure';
 import type { Answer, Relation } from './desk-case';
 
 export const methodNames: Readonly<Record<Method, string>> = {
@@ -18,4 +19,11 @@ export const answerNames: Readonly<Record<Answer, string>> = {
 export const productNames: Readonly<Record<Relation, string>> = {
   dew: 'heavy group in the top product',
   bubble: 'light group in the bottom product',
+};
+
+export const equationNames: Readonly<Record<VapourPressureRow['equation'], string>> = {
+  'wagner_2.5_5': 'Wagner 2.5,5',
+  wagner_3_6: 'Wagner 3,6',
+  dippr_101: 'DIPPR 101',
+  antoine: 'Antoine',
 };

@@ -23,6 +23,7 @@ import { ProductPanel } from './product-panel';
 import { QuantityField } from './quantity-field';
 import { SlateEditor } from './slate-editor';
 import { SlateSource } from './slate-source';
+import { SourcesPanel } from './sources-panel';
 import { caseOf, type PresetSlate } from './slates';
 
 /** How long the address waits for a drag to end: browsers refuse hundreds of changes in a row [ms]. */
@@ -41,6 +42,7 @@ const addressDelayMs = 400;
     QuantityField,
     SlateEditor,
     SlateSource,
+    SourcesPanel,
   ],
   providers: [DeskState, FollowedSensor],
   changeDetection: ChangeDetectionStrategy.OnPush,

@@ -19,6 +19,7 @@ export interface InferredPlot {
 }
 
 const steps = 60;
+const bandName = 'band of the instruments, 95 %';
 /** Coverage factor of the band: about 95 %. GUM 6.3.3 */
 export const coverage = 2;
 
@@ -90,14 +91,21 @@ export function toInferredOption(
   // A closed outline, there and back: stacked lines would part where the lower edge is held at zero.
   const outline = [...edge(1), ...edge(-1).reverse()];
   return {
-    ...plotFrame(`${product} against temperature at the present pressure, with its band.`, colours),
+    ...plotFrame(
+      `${product} against temperature at the present pressure, with its band.`,
+      [
+        { name: 'inferred', is: 'line' },
+        { name: bandName, is: 'area' },
+      ],
+      colours,
+    ),
     xAxis: plotAxis(`temperature, ${shown.temperatureUnit}`, colours, 'x'),
     yAxis: { ...plotAxis(`${product}, ${shown.fractionUnit}`, colours, 'y'), min: 0 },
     series: [
       {
         type: 'custom',
         id: 'band',
-        name: 'band of the instruments, about 95 %',
+        name: bandName,
         silent: true,
         clip: true,
         itemStyle: { color: colours.band },
@@ -127,7 +135,6 @@ export function toInferredOption(
       },
       {
         ...plotPoint('now', present && at(present.temperature, present.groupFraction), colours),
-        legendHoverLink: false,
       },
     ],
   };

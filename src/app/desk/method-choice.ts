@@ -1,10 +1,11 @@
 import { ChangeDetectionStrategy, Component, computed, inject } from '@angular/core';
 import { componentById } from '@shared/vle/components';
-import { correlationsOf } from '@shared/vle/vapour-pressure';
+import { correlationsOf, type VapourPressureRow } from '@shared/vle/vapour-pressure';
 import { Quantities } from '../ui/quantities';
 import { methods } from './desk-case';
+import { referenceText } from './slate-sources';
 import { DeskState } from './desk-state';
-import { methodNames } from './desk-words';
+import { equationNames, methodNames } from './desk-words';
 
 /** Which method, and for Raoult's law which vapour pressure correlation of each component. */
 @Component({
@@ -126,17 +127,9 @@ export class MethodChoice {
     this.state.change({ correlations: isFirst ? others : { ...others, [id]: rowId } });
   }
 
-  private described(row: ReturnType<typeof correlationsOf>[number]): string {
+  private described(row: VapourPressureRow): string {
     const [low, high] = [row.low, row.high].map((kelvin) => this.quantities.temperature(kelvin, 0));
     const equation = equationNames[row.equation];
-    return `${equation}, ${row.source}, ${low} to ${high} ${this.quantities.temperatureUnit()}`;
+    return `${equation}, ${referenceText(row.source)}, ${low} to ${high} ${this.quantities.temperatureUnit()}`;
   }
 }
-
-export const equationNames: Readonly<Record<ReturnType<typeof correlationsOf>[number]['equation'], string>> =
-  {
-    'wagner_2.5_5': 'Wagner 2.5,5',
-    wagner_3_6: 'Wagner 3,6',
-    dippr_101: 'DIPPR 101',
-    antoine: 'Antoine',
-  };

@@ -3,7 +3,7 @@ import { componentById } from '@shared/vle/components';
 import { formatNumber, noNumber } from '../ui/numbers';
 import { Quantities } from '../ui/quantities';
 import { DeskState } from './desk-state';
-import { answerNames, methodNames } from './desk-words';
+import { answerNames } from './desk-words';
 
 /** Feed, liquid and vapour of the state looked at, with K-values and partial pressures. */
 @Component({
@@ -19,7 +19,6 @@ export class PhasesTable {
   protected readonly title = computed(() => `Phases ${answerNames[this.state.answer()]}`);
   protected readonly isOld = computed(() => this.state.phases().isOld || this.state.isUnfinished());
   protected readonly words = computed(() => this.state.phases().words);
-  protected readonly method = computed(() => methodNames[this.state.method()]);
   /** Where the state lies, in a line. */
   protected readonly place = computed(() => {
     const result = this.state.phases().value?.result;

@@ -36,12 +36,20 @@ export function plotAxis(name: string, colours: ChartColours, side: 'x' | 'y') {
 }
 
 /** What all plots of the desk have in common; `said` is read out in place of the picture. */
-export function plotFrame(said: string, colours: ChartColours) {
+export function plotFrame(
+  said: string,
+  legend: readonly { readonly name: string; readonly is: 'line' | 'area' }[],
+  colours: ChartColours,
+) {
   return {
     animation: false,
     aria: { enabled: true, label: { description: said } },
     textStyle: { fontFamily: chartFonts.text, color: colours.ink },
     legend: {
+      // A line's sign is its dash alone; the library would put a dot on it.
+      data: legend.map(({ name, is }) =>
+        is === 'line' ? { name, itemStyle: { opacity: 0 } } : { name, icon: 'rect' },
+      ),
       top: 0,
       right: 12,
       itemWidth: 26,
@@ -49,7 +57,7 @@ export function plotFrame(said: string, colours: ChartColours) {
       selectedMode: false,
       textStyle: { color: colours.soft, fontFamily: chartFonts.text, fontSize: 12 },
     },
-    grid: { left: 12, right: 18, top: 34, bottom: 34, outerBoundsMode: 'same' as const },
+    grid: { left: 8, right: 18, top: 40, bottom: 26, outerBoundsMode: 'same' as const },
   };
 }
 

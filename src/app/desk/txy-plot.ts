@@ -15,6 +15,8 @@ export interface TxyPlot {
 }
 
 const steps = 40;
+const bubble = 'bubble line (liquid)';
+const dew = 'dew line (vapour)';
 
 /** Works out the plot, giving way after each point. */
 export function* txyPlot(
@@ -57,10 +59,12 @@ export function toTxyOption(
   const T = (kelvin: number) => shown.temperature(kelvin);
   const present = T(temperature);
   const temperatures = plot.points.map((point) => T(point.temperature));
-  const isInside = present >= Math.min(...temperatures) && present <= Math.max(...temperatures);
+  const [lowest, highest] = [Math.min(...temperatures), Math.max(...temperatures)];
+  const isInside = present >= lowest && present <= highest;
   return {
     ...plotFrame(
       `Boiling and dew temperature of ${first} and ${second} alone, against the fraction of ${first}.`,
+      [bubble, dew].map((name) => ({ name, is: 'line' as const })),
       colours,
     ),
     xAxis: { ...plotAxis(`${first} in ${second}, mol %`, colours, 'x'), min: 0, max: 100 },
@@ -68,7 +72,7 @@ export function toTxyOption(
     series: [
       {
         ...plotLine(
-          'bubble line (liquid)',
+          bubble,
           plot.points.map((point) => [100 * point.x, T(point.temperature)]),
           colours.inferred,
         ),
@@ -77,13 +81,18 @@ export function toTxyOption(
               silent: true,
               symbol: 'none',
               lineStyle: { color: colours.ink, type: 'dotted', width: 1 },
-              label: { formatter: 'present temperature', position: 'insideEndTop', color: colours.soft },
+              label: {
+                formatter: 'present temperature',
+                // The lines fall from left to right: below half way there is room on the left, else on the right.
+                position: present < (lowest + highest) / 2 ? 'insideStartTop' : 'insideEndTop',
+                color: colours.soft,
+              },
               data: [{ yAxis: present }],
             }
           : undefined,
       },
       plotLine(
-        'dew line (vapour)',
+        dew,
         plot.points.map((point) => [100 * point.y, T(point.temperature)]),
         colours.inferred,
         'dashed',
