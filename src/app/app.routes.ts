@@ -21,6 +21,18 @@ export const routes: Routes = [
         loadComponent: async () => (await import('./board/board')).Board,
       },
       {
+        path: 'towers/:towerId',
+        title: 'Tower',
+        canActivate: [allowed('look')],
+        loadComponent: async () => (await import('./tower/tower')).Tower,
+      },
+      {
+        path: 'samples',
+        title: 'Samples',
+        canActivate: [allowed('look')],
+        loadComponent: async () => (await import('./samples/samples')).Samples,
+      },
+      {
         path: 'desk',
         title: 'Equilibrium desk',
         canActivate: [allowed('look')],

@@ -15,9 +15,9 @@ import { Glyph } from '../ui/glyph';
 import { durationWords } from '../ui/numbers';
 import { Quantities } from '../ui/quantities';
 import { QualityChip } from '../ui/quality-chip';
-import { isStale, type Attention } from './attention';
+import { isStale, type Attention } from '../ui/attention';
 import { BoardHistory } from './board-history';
-import { chanceWords, direction } from './row-words';
+import { chanceWords, direction } from '../ui/sensor-words';
 
 /** One product: how much, against what, which way, and how far to trust it. */
 @Component({

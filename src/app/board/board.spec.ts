@@ -3,7 +3,7 @@ import { TestBed, type ComponentFixture } from '@angular/core/testing';
 import { sensorsPath, type Sensor } from '@shared/api/sensors';
 import { FakeEventStreams, loadTestSession, provideTestCore, testNow } from '../core/testing';
 import { Board } from './board';
-import { aSensor, aTrend, anEstimate } from './board-fixtures';
+import { aSensor, aTrend, anEstimate } from '../ui/sensor-fixtures';
 import { BoardHistory } from './board-history';
 
 describe('the Board', () => {

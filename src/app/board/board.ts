@@ -11,7 +11,7 @@ import { EmptyState } from '../ui/empty-state';
 import { ErrorState } from '../ui/error-state';
 import { Glyph } from '../ui/glyph';
 import { LoadingState } from '../ui/loading-state';
-import { assess, byNeed, summaryWords, type AssessedSensor } from './attention';
+import { assess, byNeed, summaryWords, type AssessedSensor } from '../ui/attention';
 import { BoardRow } from './board-row';
 
 /** Every product at a glance, whoever needs a look first at the top. */

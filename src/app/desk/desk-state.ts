@@ -11,6 +11,7 @@ import {
   type Outcome,
 } from './desk-answer';
 import { impurityOf, type Answer, type DeskCase } from './desk-case';
+import type { DeskResults } from './desk-table';
 import { pressureSpan, spanFor, temperatureSpan } from './desk-units';
 import { lastGood } from './last-good';
 import { groupFault } from './slate-edits';
@@ -160,6 +161,22 @@ export class DeskState {
       this.correlations(),
     ),
   );
+
+  /** All of it as it stands, for the table to copy. */
+  readonly results = computed((): DeskResults => ({
+    case: this.case(),
+    bubbleAtPressure: this.bubbleAtPressure(),
+    dewAtPressure: this.dewAtPressure(),
+    bubbleAtTemperature: this.bubbleAtTemperature(),
+    dewAtTemperature: this.dewAtTemperature(),
+    flash: this.flash(),
+    phases: this.phases(),
+    product: this.product(),
+    targetAtPressure: this.targetAtPressure(),
+    targetAtTemperature: this.targetAtTemperature(),
+    provenance: this.provenance(),
+    warnings: this.warnings(),
+  }));
 
   /** The two components that the T–x–y plot is of: those chosen, else the two of which there is most. */
   readonly pair = computed((): readonly [string, string] | null => {

@@ -6,13 +6,16 @@ import { MatButton } from '@angular/material/button';
 import { ActivatedRoute, Router } from '@angular/router';
 import { debounceTime, skip } from 'rxjs';
 import { components } from '@shared/vle/components';
+import { Clock } from '../core/clock';
 import { Notices } from '../core/notices';
+import { PlantTime } from '../core/plant-time';
 import { SessionStore } from '../core/session';
 import { Quantities } from '../ui/quantities';
 import { AnswersPanel } from './answers-panel';
 import { readLink, writeFollowLink, writeLink } from './case-link';
 import type { DeskCase } from './desk-case';
 import { DeskState } from './desk-state';
+import { deskTable } from './desk-table';
 import { pressureUnits, temperatureUnits } from './desk-units';
 import { slateOf, stateOf } from './followed-case';
 import { FollowedSensor, type Following } from './followed-sensor';
@@ -21,9 +24,11 @@ import { PhasesTable } from './phases-table';
 import { PlotsPanel } from './plots-panel';
 import { ProductPanel } from './product-panel';
 import { QuantityField } from './quantity-field';
+import { ShownUnitsOfPerson } from './shown-units';
 import { SlateEditor } from './slate-editor';
 import { SlateSource } from './slate-source';
 import { SourcesPanel } from './sources-panel';
+import { toCsv, toTsv, type Table } from './table-text';
 import { caseOf, type PresetSlate } from './slates';
 
 /** How long the address waits for a drag to end: browsers refuse hundreds of changes in a row [ms]. */
@@ -53,6 +58,9 @@ export class Desk {
   protected readonly state = inject(DeskState);
   protected readonly quantities = inject(Quantities);
   private readonly followed = inject(FollowedSensor);
+  private readonly shown = inject(ShownUnitsOfPerson);
+  private readonly clock = inject(Clock);
+  private readonly plantTime = inject(PlantTime);
   private readonly notices = inject(Notices);
   private readonly clipboard = inject(Clipboard);
   private readonly location = inject(Location);
@@ -108,6 +116,25 @@ export class Desk {
     const tree = this.router.createUrlTree(['/desk'], { queryParams: writeLink(this.state.case()) });
     const path = this.location.prepareExternalUrl(this.router.serializeUrl(tree));
     this.tellCopied('The link', this.clipboard.copy(new URL(path, this.document.baseURI).href));
+  }
+
+  protected copyTable(): void {
+    this.tellCopied('The table', this.clipboard.copy(toTsv(this.table())));
+  }
+
+  protected downloadCsv(): void {
+    // The mark at the beginning tells spreadsheets that it is UTF-8: units have degree signs.
+    const file = new Blob(['\ufeff', toCsv(this.table())], { type: 'text/csv;charset=utf-8' });
+    const address = URL.createObjectURL(file);
+    const link = this.document.createElement('a');
+    link.href = address;
+    link.download = `equilibrium-${this.plantTime.wallClock(this.clock.now()).date}.csv`;
+    link.click();
+    URL.revokeObjectURL(address);
+  }
+
+  private table(): Table {
+    return deskTable(this.state.results(), this.shown.units());
   }
 
   private tellCopied(what: string, isCopied: boolean): void {

@@ -18,7 +18,7 @@ import { Quantities } from '../ui/quantities';
 import { DeskState } from './desk-state';
 import { productNames } from './desk-words';
 import { inferredPlot, plotCeiling, toInferredOption, type InferredPlot } from './inferred-plot';
-import type { ShownUnits } from './plot-frame';
+import { ShownUnitsOfPerson } from './shown-units';
 import { SlicedWork, afterFrame } from './sliced-work';
 import { toTxyOption, txyPlot, type TxyPlot } from './txy-plot';
 
@@ -40,14 +40,7 @@ export class PlotsPanel {
   private readonly inferred = signal<InferredPlot | null>(null);
 
   private readonly colours = computed(() => chartColours(this.preferences.isNight()));
-  private readonly shown = computed((): ShownUnits => ({
-    temperature: (kelvin) => this.quantities.toTemperature(kelvin),
-    temperatureUnit: this.quantities.temperatureUnit(),
-    pressure: (pascal) => this.quantities.toPressure(pascal),
-    pressureUnit: this.quantities.pressureUnit(),
-    fraction: (fraction) => this.quantities.toFraction(fraction),
-    fractionUnit: this.quantities.fractionUnit(),
-  }));
+  private readonly shown = inject(ShownUnitsOfPerson).units;
 
   protected readonly choices = computed(() =>
     this.state.rows().map(({ id }) => ({ id, name: componentById(id).name })),

@@ -1,7 +1,7 @@
-import { aSensor, anEstimate } from './board-fixtures';
+import { aSensor, anEstimate } from './sensor-fixtures';
 import { testNow } from '../core/testing';
 import { assess, byNeed, summaryWords, type AssessedSensor } from './attention';
-import { chanceWords, direction } from './row-words';
+import { chanceWords, direction } from './sensor-words';
 
 const minute = 60_000;
 const hour = 60 * minute;

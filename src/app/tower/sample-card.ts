@@ -1,0 +1,69 @@
+import { httpResource } from '@angular/common/http';
+import { ChangeDetectionStrategy, Component, computed, inject, input } from '@angular/core';
+import { RouterLink } from '@angular/router';
+import { sample, samplesPath } from '@shared/api/samples';
+import type { SensorDetail, Trend } from '@shared/api/sensors';
+import { AgeText } from '../ui/age-text';
+import { Quantities } from '../ui/quantities';
+import { SampleSign } from '../ui/sample-sign';
+
+/** The newest sample and what it changed. */
+@Component({
+  selector: 'app-sample-card',
+  imports: [AgeText, RouterLink, SampleSign],
+  changeDetection: ChangeDetectionStrategy.OnPush,
+  host: { class: 'card' },
+  template: `
+    <h2>Last sample</h2>
+    @if (sensor().lastSample; as last) {
+      <p>
+        <app-sample-sign [state]="last.state" />
+        <span class="num">{{ quantities.fraction(last.value, decimals()) }}</span>
+        {{ quantities.fractionUnit() }}, {{ last.state }}, drawn <app-age-text [since]="last.drawnAt" /> ago
+      </p>
+      @if (effect(); as effect) {
+        <p>{{ effect }}</p>
+      }
+      @if (reason(); as words) {
+        <p class="soft">{{ words }}</p>
+      }
+    } @else {
+      <p class="soft">No sample has been entered for this product.</p>
+    }
+    <p><a routerLink="/samples" [queryParams]="{ tower: sensor().towerId }">Samples of this tower</a></p>
+  `,
+  styles: `
+    :host {
+      display: grid;
+      gap: 6px;
+    }
+  `,
+})
+export class SampleCard {
+  protected readonly quantities = inject(Quantities);
+  readonly sensor = input.required<SensorDetail>();
+  readonly decimals = input.required<number>();
+  /** Changes when the trend has been read again, and the sample with it. */
+  readonly reads = input<Trend>();
+
+  private readonly read = httpResource(
+    () => {
+      this.reads();
+      const last = this.sensor().lastSample;
+      return last ? `${samplesPath}/${last.id}` : undefined;
+    },
+    { parse: sample.parse },
+  );
+  private readonly whole = computed(() => (this.read.hasValue() ? this.read.value() : undefined));
+  protected readonly reason = computed(() => this.whole()?.stateReason ?? '');
+  protected readonly effect = computed(() => {
+    const { id, version } = this.sensor();
+    const own = this.whole()?.corrections.find((correction) => correction.sensorId === id);
+    if (own?.decision !== 'used') return '';
+    const isKelvin = version?.parameters.correction.domain === 'temperature';
+    const text = (offset: number) =>
+      isKelvin ? this.quantities.temperatureChange(offset, 2) : offset.toFixed(4);
+    const unit = isKelvin ? this.quantities.temperatureChangeUnit() : '';
+    return `It moved the offset from ${text(own.offsetBefore)} to ${text(own.offsetAfter)} ${unit}.`;
+  });
+}
