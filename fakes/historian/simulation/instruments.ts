@@ -33,14 +33,12 @@ export interface InstrumentSpec {
   readonly isSetPoint?: boolean;
   /** First-order lag of the sensing element [s]. */
   readonly lagSeconds?: number;
-  /** Noise: deviation in the tag's unit and how long it hangs together [min]. */
-  readonly noise?: { readonly deviation: number; readonly minutes: number };
+  /** Noise: deviation in the tag's unit, or as a share of the reading, and how long it hangs together [min]. */
+  readonly noise?: { readonly deviation: number; readonly minutes: number; readonly isShare?: boolean };
   /** Constant error, and how far that walks in a week (deviation), both in the tag's unit. */
   readonly offset?: { readonly start: number; readonly walkPerWeek: number };
   /** Where it is connected: constant difference to what it should measure, in the tag's unit. */
   readonly location?: number;
-  /** Noise proportional to the reading (flow meters). */
-  readonly relativeNoise?: number;
 }
 
 /** Digits after the point a value is stored with: far below every noise. */
@@ -74,8 +72,7 @@ export class Instrument {
     const follows = spec.lagSeconds === undefined ? 1 : 1 - Math.exp(-60 / spec.lagSeconds);
     this.#lagged = Number.isNaN(this.#lagged) ? actual : this.#lagged + follows * (actual - this.#lagged);
     if (spec.offset) this.#offset += (spec.offset.walkPerWeek / Math.sqrt(7 * 1440)) * this.#walk.normal();
-    const noise =
-      this.#noise.nextMinute() * (spec.relativeNoise === undefined ? 1 : spec.relativeNoise * actual);
+    const noise = this.#noise.nextMinute() * (spec.noise?.isShare ? actual : 1);
     return (this.reading = round(this.#lagged + (spec.location ?? 0) + this.#offset + noise));
   }
 }

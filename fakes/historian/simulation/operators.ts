@@ -27,7 +27,10 @@ export class Operators {
     this.#nextPressureMove = this.#pause(spec.pressure.setPointMoves.everyHours);
   }
 
-  /** @param product heavy group in the rundown; @param bottomsLight light component in the bottoms [mol/mol] */
+  /**
+   * @param product heavy group in the rundown [mol/mol]
+   * @param bottomsLight light component in the bottoms [mol/mol]
+   */
   nextMinute(product: number, bottomsLight: number): void {
     this.#minute += 1;
     this.#history[this.#minute % this.#history.length] = product;

@@ -29,7 +29,6 @@ export class Wander {
   nextMinute(): number {
     this.value = this.value * this.#keep + this.#kick * this.random.normal();
     const { jumps } = this.spec;
-    // The draw is made each minute, jump or not, so that the minutes after it do not depend on it.
     if (jumps !== undefined && this.random.uniform() < 1 / (60 * jumps.everyHours))
       this.value += jumps.deviation * this.random.normal();
     return this.value;

@@ -3,6 +3,9 @@ import { Wander } from './wander';
 
 const minutesPerDay = 1440;
 
+/** How often a cloudburst begins. */
+const cloudburstsPerHour = { afternoon: 1 / 16, else: 1 / 67 };
+
 /**
  * The weather of the site, as far as condensers and gauge pressures feel it: a daily swing, fronts that take days, and
  * cloudbursts, mostly in the afternoon, that wet the coolers for half an hour to two hours.
@@ -38,8 +41,10 @@ export class Weather {
     const swing = 5.5 * Math.max(0.2, 1 + this.#cloud.nextMinute());
     this.airTemperature = 290.15 + swing * sun + this.#front.nextMinute();
 
-    const perMinute = ((hour > 12 && hour < 20 ? 0.5 : 0.12) / minutesPerDay) * 3;
-    const begins = this.#rainRandom.uniform() < perMinute;
+    const isAfternoon = hour > 12 && hour < 20;
+    const begins =
+      this.#rainRandom.uniform() <
+      (isAfternoon ? cloudburstsPerHour.afternoon : cloudburstsPerHour.else) / 60;
     if (begins && this.#rainLeft <= 0) {
       this.#rainLeft = 20 + this.#rainRandom.exponential(25);
       this.#rainDepth = 4 + 5 * this.#rainRandom.uniform();

@@ -1,7 +1,10 @@
-import { describe, expect, it } from 'vitest';
+import { describe, expect, it, vi } from 'vitest';
 import { Column, type ColumnInputs } from '../../../../fakes/historian/simulation/column';
 import { SimulatedEquilibrium } from '../../../../fakes/historian/simulation/equilibrium';
 import { depropaniser } from '../../../../fakes/historian/towers/depropaniser';
+
+// Simulating and starting processes takes its time where others work too.
+vi.setConfig({ testTimeout: 60_000 });
 
 const { components, vapourInteractionPerCarbon, column: design } = depropaniser;
 const n = components.length;

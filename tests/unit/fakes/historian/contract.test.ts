@@ -1,5 +1,5 @@
 import request from 'supertest';
-import { beforeEach, describe, expect, it } from 'vitest';
+import { beforeEach, describe, expect, it, vi } from 'vitest';
 import { problem } from '@shared/api/common';
 import {
   historianLatest,
@@ -14,16 +14,21 @@ import {
 } from '@shared/api/historian';
 import { createHistorianFake, type HistorianFake } from '../../../../fakes/historian/historian-fake';
 
+// Simulating and starting processes takes its time where others work too.
+vi.setConfig({ testTimeout: 60_000 });
+
 const minute = 60_000;
 const hour = 60 * minute;
 const startAt = Date.UTC(2026, 8, 1);
 
-let now: number;
+let now = startAt + 3 * hour + 30_000;
+// One plant for all: each takes a sixth of a second to run in, and what lies behind `now` is not seen.
+const shared = aFake();
 let fake: HistorianFake;
 
 beforeEach(() => {
   now = startAt + 3 * hour + 30_000;
-  fake = aFake();
+  fake = shared;
 });
 
 function aFake(changes: object = {}): HistorianFake {
@@ -231,6 +236,10 @@ describe('raw values', () => {
 });
 
 describe('writing', () => {
+  beforeEach(() => {
+    fake = aFake();
+  });
+
   const write = async (...values: object[]) =>
     historianWritten
       .parse((await post('/v1/write', { values }).expect(200)).body)

@@ -3,8 +3,11 @@ import { mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
-import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import { historianLatest, type HistorianRaw, historianRaw } from '@shared/api/historian';
+
+// Simulating and starting processes takes its time where others work too.
+vi.setConfig({ testTimeout: 60_000 });
 
 const root = fileURLToPath(new URL('../../../..', import.meta.url));
 const clock = Date.UTC(2026, 9, 14, 9, 20, 30);
@@ -81,7 +84,7 @@ describe('the process of the historian fake', () => {
       seed: 20_260_901,
       startAt: Date.UTC(2026, 9, 7, 9),
     });
-  }, 60_000);
+  });
 
   it.each([
     ['no token', { HISTORIAN_TOKEN: '' }, /HISTORIAN_TOKEN/],

@@ -1,7 +1,10 @@
 import { readFileSync } from 'node:fs';
 import request from 'supertest';
-import { describe, expect, it } from 'vitest';
+import { describe, expect, it, vi } from 'vitest';
 import { createHistorianFake } from '../../../../fakes/historian/historian-fake';
+
+// Simulating and starting processes takes its time where others work too.
+vi.setConfig({ testTimeout: 60_000 });
 
 const readme = readFileSync(new URL('../../../../fakes/historian/README.md', import.meta.url), 'utf8');
 const startAt = Date.UTC(2026, 8, 1);

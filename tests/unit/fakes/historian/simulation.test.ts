@@ -1,9 +1,12 @@
-import { beforeAll, describe, expect, it } from 'vitest';
+import { beforeAll, describe, expect, it, vi } from 'vitest';
 import { SimulatedEquilibrium } from '../../../../fakes/historian/simulation/equilibrium';
 import { dewTemperature } from '../../../../fakes/historian/simulation/saturation';
 import { minute, SiteSimulation } from '../../../../fakes/historian/simulation/site';
 import type { TowerSpec } from '../../../../fakes/historian/simulation/tower-spec';
 import { depropaniser } from '../../../../fakes/historian/towers/depropaniser';
+
+// Simulating and starting processes takes its time where others work too.
+vi.setConfig({ testTimeout: 60_000 });
 
 const startAt = Date.UTC(2026, 8, 1);
 const hour = 60 * minute;
