@@ -91,7 +91,7 @@ export class SignIn {
   /** Only for names that exist: a stranger must not be able to fill the journal with invented ones. */
   async #noteLock(username: string, address: string, locksFor: number): Promise<void> {
     const { database, journal, users, clock } = this.deps;
-    const user = await users.exists(username);
+    const user = await users.byUsername(username);
     if (!user) return;
     await database.write((transaction) =>
       journal.record(transaction, {

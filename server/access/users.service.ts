@@ -1,6 +1,6 @@
 import { randomBytes } from 'node:crypto';
 import type { Role, User } from '@shared/api/session';
-import type { Transaction } from 'sequelize';
+import { QueryTypes, type Transaction } from 'sequelize';
 import * as z from 'zod';
 import type { Database } from '../db/database';
 import type { UserRow } from '../db/models/user-row';
@@ -41,8 +41,12 @@ export class UsersService {
 
   /** The user as everybody may see it; null when there is none of that id or it is disabled. */
   async byId(id: number): Promise<User | null> {
-    const row = await this.database.models.users.findByPk(id);
-    return row && !row.disabled ? toApi(row) : null;
+    // Asked at every request: a plain statement takes half of what a model does, which asks for the table's types first.
+    const [row] = await this.database.sequelize.query<User>(
+      'SELECT id, username, name, role FROM user WHERE id = $1 AND disabled = 0',
+      { bind: [id], type: QueryTypes.SELECT },
+    );
+    return row ?? null;
   }
 
   /**
@@ -58,7 +62,8 @@ export class UsersService {
     return isRight && row && !row.disabled ? toApi(row) : null;
   }
 
-  async exists(username: string): Promise<User | null> {
+  /** The user of that name, disabled or not. */
+  async byUsername(username: string): Promise<User | null> {
     const row = await this.database.models.users.findOne({ where: { username } });
     return row && toApi(row);
   }

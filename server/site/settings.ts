@@ -1,4 +1,5 @@
 import { site, type Site } from '@shared/api/session';
+import { QueryTypes } from 'sequelize';
 import * as z from 'zod';
 import type { Database } from '../db/database';
 
@@ -37,8 +38,12 @@ export class Settings {
   barometricPressure = async (): Promise<number> => (await this.site()).barometricPressure;
 
   async #read<G extends Group>(group: G): Promise<z.infer<Groups[G]>> {
-    const row = await this.database.models.settings.findByPk(group);
-    return groups[group].parse(row?.value ?? {}) as z.infer<Groups[G]>;
+    // A plain statement, because every page asks for it: a model would ask for the table's types first.
+    const [row] = await this.database.sequelize.query<{ value: string }>(
+      'SELECT value FROM setting WHERE key = $1',
+      { bind: [group], type: QueryTypes.SELECT },
+    );
+    return groups[group].parse(row ? JSON.parse(row.value) : {}) as z.infer<Groups[G]>;
   }
 }
 

@@ -2,7 +2,7 @@ import { may, type Permission } from '@shared/api/permissions';
 import { roles } from '@shared/api/session';
 import { Router } from 'express';
 import { expect, it } from 'vitest';
-import type { Requirement } from '../../server/access/require';
+import { requirePermission, requireSignedIn, type Requirement } from '../../server/access/require';
 import { routesOf } from '../../server/http/routes-of';
 import { startTestApp } from './support/test-app';
 
@@ -35,7 +35,7 @@ const table: Record<string, Requirement> = {
   'GET /api/equilibrium/components': 'look',
 };
 
-/** One route for each permission, so that the walk meets every one of them. */
+/** Permissions that no route asks for yet. */
 const permissionsMet: Permission[] = [
   'decideHeldSamples',
   'setUpSensors',
@@ -72,12 +72,14 @@ it.each([null, ...roles])('lets %s through exactly where the table says so', asy
 });
 
 it.each([null, ...roles])('checks the permissions no route has yet for %s', async (role) => {
-  const { requirePermission } = await import('../../server/access/require');
   const router = Router();
   for (const permission of permissionsMet)
     router.get(`/api/probe/${permission}`, requirePermission(permission), (_req, res) => {
       res.json(permission);
     });
+  router.get('/api/probe', requireSignedIn, (_req, res) => {
+    res.json('somebody');
+  });
   const app = await startTestApp({ routers: [router] });
   const client = role === null ? app.client() : await app.signedIn(role);
   for (const permission of permissionsMet) {
@@ -87,6 +89,7 @@ it.each([null, ...roles])('checks the permissions no route has yet for %s', asyn
       role === null ? 401 : may(role, permission) ? 200 : 403,
     ]);
   }
+  expect((await client.send('GET', '/api/probe')).status).toBe(role === null ? 401 : 200);
 });
 
 function isMet(requirement: Exclude<Requirement, 'nothing'>, role: (typeof roles)[number]): boolean {
