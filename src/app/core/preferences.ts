@@ -1,13 +1,14 @@
 import { DOCUMENT, Injectable, computed, effect, inject, signal } from '@angular/core';
 import * as z from 'zod';
+import { fractionUnits, pressureUnits, temperatureUnits } from '@shared/units';
 
 /** What each person may choose, kept on this device only. */
 const preferences = z.object({
   theme: z.enum(['system', 'day', 'night']).default('system'),
-  temperature: z.enum(['°C', '°F']).default('°C'),
-  pressure: z.enum(['kPa', 'bar', 'psi']).default('kPa'),
+  temperature: z.enum(temperatureUnits).default('°C'),
+  pressure: z.enum(pressureUnits).default('kPa'),
   pressureReference: z.enum(['absolute', 'gauge']).default('gauge'),
-  fraction: z.enum(['mol %', 'ppm']).default('mol %'),
+  fraction: z.enum(fractionUnits).default('mol %'),
 });
 export type PreferenceValues = z.infer<typeof preferences>;
 export type Theme = PreferenceValues['theme'];

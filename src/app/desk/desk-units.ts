@@ -1,4 +1,4 @@
-import { pascalsIn, temperatureFrom, temperatureTo } from '../ui/unit-conversions';
+import { pascalsIn, temperatureFrom, temperatureTo } from '@shared/units';
 import type { UnitChoice } from '../core/preferences';
 
 /** One unit a quantity can be typed in; canonical is K or Pa absolute. */

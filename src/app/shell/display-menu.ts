@@ -1,4 +1,5 @@
 import { ChangeDetectionStrategy, Component, inject } from '@angular/core';
+import { fractionUnits, pressureUnits, temperatureUnits } from '@shared/units';
 import { Preferences, type PreferenceValues } from '../core/preferences';
 
 interface Choice {
@@ -74,8 +75,8 @@ export class DisplayMenu {
   private readonly preferences = inject(Preferences);
 
   protected readonly choices: readonly Choice[] = [
-    { key: 'temperature', legend: 'Temperature', options: asLabelled('°C', '°F') },
-    { key: 'pressure', legend: 'Pressure', options: asLabelled('kPa', 'bar', 'psi') },
+    { key: 'temperature', legend: 'Temperature', options: asLabelled(...temperatureUnits) },
+    { key: 'pressure', legend: 'Pressure', options: asLabelled(...pressureUnits) },
     {
       key: 'pressureReference',
       legend: 'Pressure counts from',
@@ -84,7 +85,7 @@ export class DisplayMenu {
         { value: 'absolute', label: 'zero (absolute)' },
       ],
     },
-    { key: 'fraction', legend: 'Composition', options: asLabelled('mol %', 'ppm') },
+    { key: 'fraction', legend: 'Composition', options: asLabelled(...fractionUnits) },
     {
       key: 'theme',
       legend: 'Colours',

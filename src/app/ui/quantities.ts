@@ -1,8 +1,8 @@
 import { Injectable, computed, inject } from '@angular/core';
+import { degreesPerKelvin, fractionFactor, pascalsIn, temperatureFrom, temperatureTo } from '@shared/units';
 import { Preferences } from '../core/preferences';
 import { SessionStore } from '../core/session';
 import { formatNumber } from './numbers';
-import { fractionFactor, pascalsIn, temperatureFrom, temperatureTo } from './unit-conversions';
 
 /**
  * Canonical quantities in the units the person likes, and back. All methods read signals, so that a `computed` or template
@@ -43,7 +43,7 @@ export class Quantities {
   }
 
   toTemperatureChange(kelvin: number): number {
-    return this.units().temperature === '°C' ? kelvin : kelvin * 1.8;
+    return kelvin * degreesPerKelvin(this.units().temperature);
   }
 
   /** @param pascal absolute */
