@@ -5,7 +5,7 @@ import type { SensorDetail } from '@shared/api/sensors';
 import { componentById } from '@shared/vle/components';
 import { Clock } from '../core/clock';
 import { PlantTime } from '../core/plant-time';
-import { durationWords } from '../ui/numbers';
+import { durationWords, formatNumber } from '../ui/numbers';
 import { Quantities } from '../ui/quantities';
 import { SampleSign } from '../ui/sample-sign';
 
@@ -46,9 +46,7 @@ export class SampleRow {
   });
   protected readonly sigma = computed(() => {
     const own = this.own();
-    return own
-      ? (own.innovation / Math.sqrt(own.innovationVariance)).toFixed(1).replace('-', '\u2212')
-      : null;
+    return own ? formatNumber(own.innovation / Math.sqrt(own.innovationVariance), 1, true) : null;
   });
   protected readonly offset = computed(() => {
     const own = this.own();

@@ -17,8 +17,9 @@ import { SampleSign } from '../ui/sample-sign';
     <h2>Last sample</h2>
     @if (sensor().lastSample; as last) {
       <p>
-        <app-sample-sign [state]="last.state" />
-        <span class="num">{{ quantities.fraction(last.value, decimals()) }}</span>
+        <app-sample-sign [state]="last.state" />&ngsp;<span class="num">{{
+          quantities.fraction(last.value, decimals())
+        }}</span>
         {{ quantities.fractionUnit() }}, {{ last.state }}, drawn <app-age-text [since]="last.drawnAt" /> ago
       </p>
       @if (effect(); as effect) {

@@ -1,6 +1,7 @@
 import type { EChartsCoreOption } from 'echarts/core';
 import type { SampleState, Trend } from '@shared/api/sensors';
 import { chartFonts, type ChartColours } from '../ui/chart-colours';
+import { formatNumber } from '../ui/numbers';
 
 /** How the trend writes what it shows: canonical in, the person's units and the plant's time out. */
 export interface TrendWords {
@@ -69,7 +70,7 @@ export function toTrendOption(
 ): EChartsCoreOption {
   const { trend, limits, from, to } = picture;
   const left = picture.isNarrow ? 48 : 64;
-  const right = picture.isNarrow ? 12 : 72;
+  const right = picture.isNarrow ? 12 : 20;
   const names = [
     `${picture.symbol}, ${words.fractionUnit}`,
     `temperature, ${words.temperatureUnit}`,
@@ -115,7 +116,7 @@ export function toTrendOption(
       nameGap: 10,
       scale: true,
       splitNumber: index === 0 ? 5 : 2,
-      axisLabel: { color: colours.soft, fontFamily: chartFonts.numbers, fontSize: 12 },
+      axisLabel: { color: colours.soft, fontFamily: chartFonts.numbers, fontSize: 12, formatter: axisNumber },
       splitLine: { lineStyle: { color: colours.line } },
       ...(index === 0 ? compositionRange(picture, words) : {}),
     })),
@@ -176,6 +177,12 @@ function compositionRange({ trend, limits }: TrendPicture, words: TrendWords) {
     1e-6,
   );
   return { min: 0, max: roundUp(words.fraction(Math.min(1.05 * highest, cap))) };
+}
+
+/** A number at an axis with the decimals it needs and no more. */
+function axisNumber(value: number): string {
+  const decimals = (String(Number(value.toPrecision(6))).split('.')[1] ?? '').length;
+  return formatNumber(value, decimals);
 }
 
 function roundUp(value: number): number {
