@@ -7,7 +7,6 @@ import {
   provideZonelessChangeDetection,
   type ApplicationConfig,
 } from '@angular/core';
-import { MAT_FORM_FIELD_DEFAULT_OPTIONS } from '@angular/material/form-field';
 import {
   TitleStrategy,
   provideRouter,
@@ -33,8 +32,6 @@ export const appConfig: ApplicationConfig = {
     ),
     provideHttpClient(withInterceptors([sessionInterceptor])),
     { provide: TitleStrategy, useClass: PlantTitle },
-    // A filled field as dense as ours has no room for its label.
-    { provide: MAT_FORM_FIELD_DEFAULT_OPTIONS, useValue: { appearance: 'outline' } },
     provideAppInitializer(async () => {
       inject(HeadingFocus);
       await inject(SessionStore).load();

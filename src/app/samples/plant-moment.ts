@@ -24,11 +24,11 @@ import { PlantTime, zoneName, type ParsedPlantTime } from '../core/plant-time';
       {{ label() }} <span class="soft">({{ zone() }})</span>
     </p>
     <div class="fields">
-      <mat-form-field subscriptSizing="dynamic">
+      <mat-form-field appearance="outline" subscriptSizing="dynamic">
         <mat-label>Date</mat-label>
         <input matInput type="date" [value]="date()" (input)="date.set(textOf($event))" />
       </mat-form-field>
-      <mat-form-field subscriptSizing="dynamic">
+      <mat-form-field appearance="outline" subscriptSizing="dynamic">
         <mat-label>Time</mat-label>
         <input matInput type="time" [value]="time()" (input)="time.set(textOf($event))" />
       </mat-form-field>

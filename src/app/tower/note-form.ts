@@ -21,7 +21,7 @@ import { SessionStore } from '../core/session';
     <h2>Note</h2>
     @if (session.may('writeNotes')) {
       <form (submit)="$event.preventDefault(); write()">
-        <mat-form-field>
+        <mat-form-field appearance="outline">
           <mat-label>What happened?</mat-label>
           <textarea matInput [formControl]="text" rows="2" maxlength="1000"></textarea>
         </mat-form-field>
