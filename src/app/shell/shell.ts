@@ -1,6 +1,5 @@
 import { ChangeDetectionStrategy, Component, computed, inject } from '@angular/core';
 import { toSignal } from '@angular/core/rxjs-interop';
-import { MatButton } from '@angular/material/button';
 import { NavigationEnd, Router, RouterLink, RouterOutlet } from '@angular/router';
 import { mdiAccountOutline, mdiClose, mdiRuler, mdiWeatherNight, mdiWhiteBalanceSunny } from '@mdi/js';
 import { filter, map } from 'rxjs';
@@ -17,7 +16,7 @@ import { entryOf, menu } from './menu';
 /** What stands around every screen: menu, site, live state, clock, and who is signed in. */
 @Component({
   selector: 'app-shell',
-  imports: [DisplayMenu, Glyph, LiveState, MatButton, RouterLink, RouterOutlet],
+  imports: [DisplayMenu, Glyph, LiveState, RouterLink, RouterOutlet],
   changeDetection: ChangeDetectionStrategy.OnPush,
   templateUrl: './shell.html',
   styleUrl: './shell.scss',

@@ -1,5 +1,4 @@
 import { ChangeDetectionStrategy, Component, computed, input, output } from '@angular/core';
-import { MatButton } from '@angular/material/button';
 import { mdiAlertOctagonOutline } from '@mdi/js';
 import { describeFailure } from '../core/api-error';
 import { Glyph } from './glyph';
@@ -7,7 +6,7 @@ import { Glyph } from './glyph';
 /** Says what could not be read, what can be done about it, and offers to try again. */
 @Component({
   selector: 'app-error-state',
-  imports: [Glyph, MatButton],
+  imports: [Glyph],
   changeDetection: ChangeDetectionStrategy.OnPush,
   host: { role: 'alert' },
   template: `
@@ -18,7 +17,7 @@ import { Glyph } from './glyph';
         Request <span class="num">{{ id }}</span>
       </p>
     }
-    <button matButton="outlined" type="button" (click)="retry.emit()">Try again</button>
+    <button class="outlined" type="button" (click)="retry.emit()">Try again</button>
   `,
   styles: `
     :host {
