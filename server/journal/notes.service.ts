@@ -13,6 +13,9 @@ export interface NotesDependencies {
   readonly journal: JournalService;
 }
 
+/** A screen's clock may run ahead of ours by this much; its note is then one of now [ms]. */
+const clockTolerance = 60_000;
+
 /** People's remarks on moments of a trend. */
 export class NotesService {
   constructor(private readonly deps: NotesDependencies) {}
@@ -26,7 +29,7 @@ export class NotesService {
     const { database, clock, events, journal } = this.deps;
     const now = clock.now();
     const sensor = await this.#sensor(draft.sensorId);
-    if (draft.t > now)
+    if (draft.t > now + clockTolerance)
       throw new Problem(
         422,
         'note-in-future',
@@ -37,7 +40,13 @@ export class NotesService {
       );
     const row = await database.write(async (transaction) => {
       const written = await database.models.notes.create(
-        { sensorId: draft.sensorId, t: draft.t, text: draft.text, authorId: author.id, writtenAt: now },
+        {
+          sensorId: draft.sensorId,
+          t: Math.min(draft.t, now),
+          text: draft.text,
+          authorId: author.id,
+          writtenAt: now,
+        },
         { transaction },
       );
       await journal.record(transaction, {

@@ -3,6 +3,7 @@ import { browser } from './browser';
 
 export default defineConfig({
   testDir: '.',
+  globalSetup: './build-plant.ts',
   testMatch: '*.e2e.ts',
   outputDir: '../../test-results',
   // Each story has a plant of its own; two at once fit two cores.
