@@ -53,7 +53,6 @@ describe('the colours of the theme', () => {
     themes.flatMap((theme) => [
       { theme, text: 'on-inferred', ground: 'inferred' },
       { theme, text: 'urgent', ground: 'urgent-ground' },
-      { theme, text: 'attention', ground: 'attention-ground' },
     ]),
   )('lets $text be read on $ground by $theme', ({ theme, text, ground }) => {
     expect(contrast(tokens.get(text)![theme], tokens.get(ground)![theme])).toBeGreaterThanOrEqual(4.5);
