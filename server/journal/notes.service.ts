@@ -38,11 +38,12 @@ export class NotesService {
           errors: { t: 'lies in the future' },
         },
       );
+    const t = Math.min(draft.t, now);
     const row = await database.write(async (transaction) => {
       const written = await database.models.notes.create(
         {
           sensorId: draft.sensorId,
-          t: Math.min(draft.t, now),
+          t,
           text: draft.text,
           authorId: author.id,
           writtenAt: now,
@@ -54,13 +55,13 @@ export class NotesService {
         userId: author.id,
         action: 'note-written',
         subject: { kind: 'note', id: String(written.id), name: sensor.name },
-        changes: [{ field: 'about', from: null, to: draft.t, unit: 'ms' }],
+        changes: [{ field: 'about', from: null, to: t, unit: 'ms' }],
         reason: draft.text,
       });
       return written;
     });
     events.publish({ type: 'note', now, noteId: row.id, sensorId: draft.sensorId });
-    return { ...draft, id: row.id, author: author.name, writtenAt: now };
+    return { ...draft, t, id: row.id, author: author.name, writtenAt: now };
   }
 
   /** Notes of one sensor, the most recent moment first; at most 500. */

@@ -97,7 +97,7 @@ export function zoneName(t: number, zone: string): string {
 const nameLocales = ['en-CA', 'en-GB', 'en-AU', 'en-IN', 'en-ZA'];
 
 /** Wall clock minus UTC at `t` [ms]. */
-function zoneOffset(t: number, zone: string): number {
+export function zoneOffset(t: number, zone: string): number {
   const parts = wallParts(t, zone);
   const wall = Date.UTC(
     Number(parts['year']),
@@ -177,6 +177,11 @@ export class PlantTime {
 
   wallClock(t: number): { date: string; time: string } {
     return plantWallClock(t, this.zone);
+  }
+
+  /** Wall clock minus UTC at `t` [ms]. */
+  offset(t: number): number {
+    return zoneOffset(t, this.zone);
   }
 
   parse(date: string, time: string): ParsedPlantTime {

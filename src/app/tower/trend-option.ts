@@ -13,6 +13,8 @@ export interface TrendWords {
   readonly pressureUnit: string;
   readonly offset: (kelvin: number) => number;
   readonly offsetUnit: string;
+  /** The plant's wall clock minus UTC [ms]: ticks fall on the plant's hours and midnights. */
+  readonly zoneOffset: number;
   /** `14:07`, and `2 Dec` where a day begins. */
   readonly axisTime: (t: number) => string;
   /** `2 Dec, 14:07 AST`. */
@@ -79,16 +81,19 @@ export function toTrendOption(
   ];
   const places = [lanes.composition, lanes.temperature, lanes.pressure, lanes.offset];
   const last = places.length - 1;
+  const place = (t: number) => t + words.zoneOffset;
+  const ceiling = roundUp(words.fraction(ceilingOf(picture)));
   return {
     animation: false,
+    useUTC: true,
     aria: { enabled: true, label: { description: described(picture, words) } },
     textStyle: { fontFamily: chartFonts.text, color: colours.ink },
     grid: places.map(({ top, height }) => ({ left, right, top, height })),
     xAxis: places.map((_, index) => ({
       type: 'time',
       gridIndex: index,
-      min: from,
-      max: to,
+      min: place(from),
+      max: place(to),
       axisLine: { lineStyle: { color: colours.edge }, onZero: false },
       axisTick: { show: index === last },
       axisLabel: {
@@ -97,7 +102,7 @@ export function toTrendOption(
         fontFamily: chartFonts.numbers,
         fontSize: 12,
         hideOverlap: true,
-        formatter: words.axisTime,
+        formatter: (value: number) => words.axisTime(value - words.zoneOffset),
       },
       splitLine: { show: true, lineStyle: { color: colours.line } },
       axisPointer: { label: { show: false } },
@@ -118,7 +123,7 @@ export function toTrendOption(
       splitNumber: index === 0 ? 5 : 2,
       axisLabel: { color: colours.soft, fontFamily: chartFonts.numbers, fontSize: 12, formatter: axisNumber },
       splitLine: { lineStyle: { color: colours.line } },
-      ...(index === 0 ? compositionRange(picture, words) : {}),
+      ...(index === 0 ? { min: 0, max: ceiling } : {}),
     })),
     axisPointer: { link: [{ xAxisIndex: 'all' }], lineStyle: { color: colours.soft, type: 'dotted' } },
     tooltip: {
@@ -133,7 +138,8 @@ export function toTrendOption(
         tooltipText(
           picture,
           words,
-          Array.isArray(parts) ? (parts[0] as TooltipPart).axisValue : (parts as TooltipPart).axisValue,
+          (Array.isArray(parts) ? (parts[0] as TooltipPart) : (parts as TooltipPart)).axisValue -
+            words.zoneOffset,
         ),
     },
     dataZoom: [
@@ -151,32 +157,26 @@ export function toTrendOption(
       qualityLine('inferred', 0, trend, words, colours),
       qualityLine('inferred, Uncertain', 1, trend, words, colours),
       limitLines(limits, words, colours),
-      noteLines(trend, colours),
-      line('temperature', 1, trend.temperature, words.temperature, colours.ink),
-      line('pressure', 2, trend.pressure, words.pressure, colours.ink),
-      { ...line('offset', 3, trend.offset, words.offset, colours.laboratory), step: 'end' },
-      sampleSeries(trend, words, colours),
+      noteLines(trend, words, colours),
+      line('temperature', 1, trend.temperature, words.temperature, words, colours.ink),
+      line('pressure', 2, trend.pressure, words.pressure, words, colours.ink),
+      { ...line('offset', 3, trend.offset, words.offset, words, colours.laboratory), step: 'end' },
+      sampleSeries(trend, ceiling, words, colours),
     ],
   };
 }
 
-/** The composition lane shows the limit, the band and every sample, and a fraction is never below zero. */
-function compositionRange({ trend, limits }: TrendPicture, words: TrendWords) {
-  const seen = [
-    ...trend.inferred.high,
-    ...trend.samples.map((sample) => sample.value),
-    limits.high,
-    limits.low,
-    limits.target,
-  ].filter((value): value is number => value !== null);
-  const highest = Math.max(0, ...seen);
-  // A band of the first hours, before any sample, would press everything else flat.
-  const values = trend.inferred.value.filter((value): value is number => value !== null);
-  const cap = Math.max(
-    1.6 * Math.max(limits.high ?? 0, ...values, ...trend.samples.map((sample) => sample.value)),
-    1e-6,
-  );
-  return { min: 0, max: roundUp(words.fraction(Math.min(1.05 * highest, cap))) };
+/**
+ * Top of the composition lane [mol/mol]: above limit, line and believed samples. A held sample far off would press
+ * everything else flat; it is drawn at the top edge with its value beside it.
+ */
+function ceilingOf({ trend, limits }: TrendPicture): number {
+  const believed = trend.samples.filter((sample) => sample.state === 'used').map((sample) => sample.value);
+  const line = Math.max(0, ...trend.inferred.value.map((value) => value ?? 0));
+  const band = Math.max(0, ...trend.inferred.high.map((value) => value ?? 0));
+  const all = Math.max(line, limits.high ?? 0, limits.low ?? 0, limits.target ?? 0, ...believed);
+  // Nor may the wide band of the first hours, before any sample.
+  return Math.max(1.1 * all, Math.min(1.05 * band, 1.5 * all), 1e-6);
 }
 
 /** A number at an axis with the decimals it needs and no more. */
@@ -196,6 +196,7 @@ function line(
   lane: number,
   series: Trend['temperature'],
   shown: (value: number) => number,
+  words: TrendWords,
   colour: string,
 ) {
   return {
@@ -209,7 +210,7 @@ function line(
     lineStyle: { color: colour, width: 1.3 },
     itemStyle: { color: colour },
     data: series.t.map((t, i): [number, number | null] => [
-      t,
+      t + words.zoneOffset,
       series.value[i] == null ? null : shown(series.value[i]),
     ]),
   };
@@ -233,7 +234,7 @@ function qualityLine(name: string, quality: 0 | 1, trend: Trend, words: TrendWor
     itemStyle: { color: colours.inferred },
     z: 4,
     data: t.map((time, i): [number, number | null] => [
-      time,
+      time + words.zoneOffset,
       value[i] == null || !(belongs(i) || (belongs(i - 1) && value[i - 1] != null))
         ? null
         : words.fraction(value[i]),
@@ -260,15 +261,17 @@ function bandSeries({ inferred }: Trend, words: TrendWords, colours: ChartColour
     clip: true,
     // One datum that spans everything, so that zooming never takes it for outside.
     encode: { x: [0, 1], y: [2] },
-    data: inferred.t.length === 0 ? [] : [[first, last, 0]],
+    data: inferred.t.length === 0 ? [] : [[first + words.zoneOffset, last + words.zoneOffset, 0]],
     renderItem: (_params: unknown, drawing: Drawing) => ({
       type: 'group',
       children: stretches.map((stretch) => ({
         type: 'polygon',
         shape: {
           points: [
-            ...stretch.map(({ t, high }) => drawing.coord([t, words.fraction(high)])),
-            ...[...stretch].reverse().map(({ t, low }) => drawing.coord([t, words.fraction(low)])),
+            ...stretch.map(({ t, high }) => drawing.coord([t + words.zoneOffset, words.fraction(high)])),
+            ...[...stretch]
+              .reverse()
+              .map(({ t, low }) => drawing.coord([t + words.zoneOffset, words.fraction(low)])),
           ],
         },
         style: { fill: colours.band },
@@ -335,7 +338,7 @@ function limitLines(limits: TrendPicture['limits'], words: TrendWords, colours: 
 
 const longestNote = 28;
 
-function noteLines({ notes }: Trend, colours: ChartColours) {
+function noteLines({ notes }: Trend, words: TrendWords, colours: ChartColours) {
   return {
     type: 'line' as const,
     id: 'notes',
@@ -347,7 +350,7 @@ function noteLines({ notes }: Trend, colours: ChartColours) {
       silent: true,
       animation: false,
       data: notes.map((note) => ({
-        xAxis: note.t,
+        xAxis: note.t + words.zoneOffset,
         lineStyle: { color: colours.soft, type: 'dotted' as const, width: 1 },
         label: {
           formatter: `note: ${note.text.length > longestNote ? `${note.text.slice(0, longestNote)}…` : note.text}`,
@@ -362,7 +365,7 @@ function noteLines({ notes }: Trend, colours: ChartColours) {
   };
 }
 
-function sampleSeries({ samples }: Trend, words: TrendWords, colours: ChartColours) {
+function sampleSeries({ samples }: Trend, ceiling: number, words: TrendWords, colours: ChartColours) {
   return {
     type: 'scatter' as const,
     id: 'samples',
@@ -371,9 +374,19 @@ function sampleSeries({ samples }: Trend, words: TrendWords, colours: ChartColou
     symbolSize: 12,
     data: samples.map((sample) => {
       const { symbol, isFilled } = sampleSigns[sample.state];
+      const shown = words.fraction(sample.value);
+      const isOff = shown > ceiling;
       return {
-        value: [sample.drawnAt, words.fraction(sample.value)],
+        value: [sample.drawnAt + words.zoneOffset, isOff ? 0.96 * ceiling : shown],
         symbol,
+        label: {
+          show: isOff,
+          formatter: `${words.fractionText(sample.value)} ↑`,
+          position: 'right' as const,
+          color: colours.laboratory,
+          fontFamily: chartFonts.numbers,
+          fontSize: 12,
+        },
         itemStyle: {
           color: isFilled ? colours.laboratory : colours.sheet,
           borderColor: colours.laboratory,

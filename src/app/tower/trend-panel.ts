@@ -76,6 +76,7 @@ export class TrendPanel {
       pressureUnit: quantities.pressureUnit(),
       offset: (value) => (isKelvin ? quantities.toTemperatureChange(value) : value),
       offsetUnit,
+      zoneOffset: plantTime.offset(this.ends().to),
       axisTime: (t) => {
         const time = plantTime.clockTime(t);
         return time === '00:00' ? (plantTime.dateTime(t, now).split(',')[0] ?? time) : time;
