@@ -22,6 +22,9 @@ export interface PhaseEnvelope {
 /** Lowest pressure drawn [Pa]. */
 const lowest = 1e5;
 
+/** Longest step along a line, in ln K, ln T or ln P: fine enough to look smooth. */
+const finest = 0.1;
+
 /** Points of an ideal line. */
 const idealPoints = 40;
 
@@ -79,32 +82,48 @@ function pengRobinsonEnvelope(
 
 function followed(line: SaturationLine): { points: EnvelopePoint[]; critical: EnvelopePoint | null } {
   const { n } = line;
-  const points: EnvelopePoint[] = [];
+  const walked: LinePoint[] = [];
   let critical: EnvelopePoint | null = null;
-  const at = (u: LinePoint): EnvelopePoint => ({
-    temperature: Math.exp(u[n]!),
-    pressure: Math.exp(u[n + 1]!),
-  });
   walkLine(
     line,
     (u, before) => {
-      if (before) {
+      if (before && n > 1) {
         let widest = 0;
         for (let i = 1; i < n; i++) if (Math.abs(before[i]!) > Math.abs(before[widest]!)) widest = i;
-        if (n > 1 && Math.sign(u[widest]!) !== Math.sign(before[widest]!)) {
-          const share = before[widest]! / (before[widest]! - u[widest]!);
-          critical = at(before.map((value, i) => value + share * (u[i]! - value)));
+        if (Math.sign(u[widest]!) !== Math.sign(before[widest]!)) {
+          critical = atEqualPhases([...walked.slice(-3), u], widest, n);
           return true;
         }
       }
-      points.push(at(u));
+      walked.push(u.slice());
       return false;
     },
     lowest,
+    finest,
   );
   if (n === 1) {
     const [only] = line.components;
     critical = { temperature: only!.criticalTemperature, pressure: only!.criticalPressure };
   }
-  return { points, critical };
+  return {
+    points: walked.map((u) => ({ temperature: Math.exp(u[n]!), pressure: Math.exp(u[n + 1]!) })),
+    critical,
+  };
+}
+
+/**
+ * The point where ln K of one component is zero, by Lagrange interpolation through the points around it. It cannot be
+ * solved for: with equal phases every temperature and pressure fits.
+ */
+function atEqualPhases(around: readonly LinePoint[], component: number, n: number): EnvelopePoint {
+  const at = (unknown: number) =>
+    around.reduce((sum, u, i) => {
+      const weight = around.reduce(
+        (product, other, j) =>
+          j === i ? product : (product * -other[component]!) / (u[component]! - other[component]!),
+        1,
+      );
+      return sum + weight * u[unknown]!;
+    }, 0);
+  return { temperature: Math.exp(at(n)), pressure: Math.exp(at(n + 1)) };
 }

@@ -89,6 +89,7 @@ export function walkLine(
   line: SaturationLine,
   visit: (u: LinePoint, before: LinePoint | undefined) => boolean,
   startPressure = 1e4,
+  longestStep = 0.5,
 ): 'stopped' | 'ended' | 'no-start' {
   const { n } = line;
   let u: LinePoint | undefined;
@@ -100,7 +101,7 @@ export function walkLine(
   if (visit(u, undefined)) return 'stopped';
   let held = n + 1;
   let direction = 1;
-  let step = 0.4;
+  let step = Math.min(0.4, longestStep);
   for (let count = 0; count < 2000; count++) {
     const tangent = line.tangent(u, held);
     if (!tangent) return 'ended';
@@ -126,7 +127,7 @@ export function walkLine(
     }
     if (visit(trial, u)) return 'stopped';
     u = trial;
-    if (iterations <= 4) step = Math.min(step * 1.6, 0.5);
+    if (iterations <= 4) step = Math.min(step * 1.6, longestStep);
     else if (iterations > 7) step /= 2;
     if (u[n + 1]! > Math.log(3e9) || u[n]! < Math.log(20) || u[n + 1]! < Math.log(1e-8)) return 'ended';
   }

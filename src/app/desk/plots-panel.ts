@@ -17,6 +17,7 @@ import { provideCharts } from '../ui/provide-charts';
 import { Quantities } from '../ui/quantities';
 import { DeskState } from './desk-state';
 import { productNames } from './desk-words';
+import { envelopePlot, toEnvelopeOption, type EnvelopePlot } from './envelope-plot';
 import { inferredPlot, plotCeiling, toInferredOption, type InferredPlot } from './inferred-plot';
 import { ShownUnitsOfPerson } from './shown-units';
 import { SlicedWork, afterFrame } from './sliced-work';
@@ -36,6 +37,7 @@ export class PlotsPanel {
   private readonly quantities = inject(Quantities);
   private readonly preferences = inject(Preferences);
 
+  private readonly envelope = signal<EnvelopePlot | null>(null);
   private readonly txy = signal<TxyPlot | null>(null);
   private readonly inferred = signal<InferredPlot | null>(null);
 
@@ -45,6 +47,16 @@ export class PlotsPanel {
   protected readonly choices = computed(() =>
     this.state.rows().map(({ id }) => ({ id, name: componentById(id).name })),
   );
+  protected readonly envelopeOption = computed(() => {
+    const envelope = this.envelope()?.envelope;
+    if (!envelope) return null;
+    const present = { temperature: this.state.temperature(), pressure: this.state.pressure() };
+    return toEnvelopeOption(envelope, present, this.shown(), this.colours());
+  });
+  protected readonly envelopeWords = computed(() => {
+    const mixture = this.state.mixture();
+    return mixture.kind === 'refused' ? mixture.words : (this.envelope()?.words ?? '');
+  });
   protected readonly txyOption = computed(() => {
     const plot = this.txy();
     if (!plot || plot.points.length === 0) return null;
@@ -93,13 +105,19 @@ export class PlotsPanel {
     if (!view) return;
     const later = afterFrame(view);
     const now = () => view.performance.now();
+    const envelopeWork = new SlicedWork<EnvelopePlot>(later, now, (plot) => this.envelope.set(plot));
     const txyWork = new SlicedWork<TxyPlot>(later, now, (plot) => this.txy.set(plot));
     const inferredWork = new SlicedWork<InferredPlot>(later, now, (plot) => this.inferred.set(plot));
     inject(DestroyRef).onDestroy(() => {
+      envelopeWork.stop();
       txyWork.stop();
       inferredWork.stop();
     });
     // The work goes on outside Angular, between frames.
+    effect(() => {
+      const mixture = this.state.mixture();
+      if (mixture.kind === 'answered') envelopeWork.request(() => envelopePlot(mixture.value));
+    });
     effect(() => {
       const pair = this.state.pair();
       const how = { method: this.state.method(), correlations: this.pairCorrelations() };
