@@ -34,7 +34,7 @@ test('an operator sees the value move, enters a sample and sees point, offset an
   await page.getByRole('link', { name: /Depropaniser/ }).click();
   await expect(page.getByRole('heading', { level: 1, name: 'Depropaniser' })).toBeVisible();
   await test.step('the trend is drawn', async () => {
-    await page.waitForFunction(hasPaintedPixels);
+    await expect.poll(() => page.evaluate<boolean>(hasPaintedPixels)).toBe(true);
     await page.getByRole('button', { name: '7 d' }).click();
     await expect(page.getByRole('button', { name: '7 d' })).toHaveAttribute('aria-pressed', 'true');
     await page.getByText('The trend as a table').click();
