@@ -92,8 +92,8 @@ function solveFraction(off: (h: number) => number | undefined): { h: number; cla
   let fLow = off(low),
     fHigh = off(high);
   // One end may have no saturation point at T (a light group above its critical temperature): draw it in.
-  for (let tries = 0; tries < 60 && fLow === undefined; tries++) fLow = off((low += (high - low) / 8));
-  for (let tries = 0; tries < 60 && fHigh === undefined; tries++) fHigh = off((high -= (high - low) / 8));
+  for (let tries = 0; tries < 8 && fLow === undefined; tries++) fLow = off((low += (high - low) / 4));
+  for (let tries = 0; tries < 8 && fHigh === undefined; tries++) fHigh = off((high -= (high - low) / 4));
   if (fLow === undefined || fHigh === undefined)
     throw new EquilibriumError(
       'no-two-phase-solution',

@@ -14,28 +14,46 @@ export interface Split {
   readonly K: readonly number[];
 }
 
+/** Shares of the two phases; each with all its digits, however small it is. They sum to 1. */
+export interface Shares {
+  readonly vapour: number;
+  readonly liquid: number;
+}
+
 /**
- * Rachford-Rice: the vapour fraction β with Σ z(K−1)/(1+β(K−1)) = 0.
+ * Rachford-Rice: the shares with Σ z(K−1)/(L + V K) = 0.
  *
- * @returns β inside the open interval of all-positive phases; under 0 the feed is liquid, over 1 vapour (negative flash)
+ * The smaller share is the one solved for, since the other is then 1 minus it without loss.
+ * @returns shares inside the open interval of all-positive phases; a negative one says which single phase it is
  * @source rachford1952
  */
-export function rachfordRice(z: ArrayLike<number>, K: ArrayLike<number>): number {
+export function rachfordRice(z: ArrayLike<number>, K: ArrayLike<number>): Shares {
+  const vapour = shareOf(z, K);
+  if (!(vapour > 0.5) || vapour === Infinity) return { vapour, liquid: 1 - vapour };
+  const liquid = shareOf(
+    z,
+    Float64Array.from(K, (k) => 1 / k),
+  );
+  return { vapour: 1 - liquid, liquid };
+}
+
+/** The share β with Σ z(K−1)/(1+β(K−1)) = 0, by Newton inside a bracket; ±Infinity where every K lies on one side of 1. */
+function shareOf(z: ArrayLike<number>, K: ArrayLike<number>): number {
   const n = z.length;
-  let least = Infinity,
-    most = -Infinity;
+  let least = Infinity;
+  let most = -Infinity;
   for (let i = 0; i < n; i++) {
     least = Math.min(least, K[i]!);
     most = Math.max(most, K[i]!);
   }
   if (least >= 1) return Infinity;
   if (most <= 1) return -Infinity;
-  let low = 1 / (1 - most),
-    high = 1 / (1 - least);
-  let beta = Math.min(Math.max(0.5, low + 1e-12), high - 1e-12);
-  for (let step = 0; step < 200; step++) {
-    let f = 0,
-      slope = 0;
+  let low = 1 / (1 - most);
+  let high = 1 / (1 - least);
+  let beta = low < 0 && high > 0 ? 0 : (low + high) / 2;
+  for (let step = 0; step < 300; step++) {
+    let f = 0;
+    let slope = 0;
     for (let i = 0; i < n; i++) {
       const part = (K[i]! - 1) / (1 + beta * (K[i]! - 1));
       f += z[i]! * part;
@@ -45,19 +63,23 @@ export function rachfordRice(z: ArrayLike<number>, K: ArrayLike<number>): number
     if (f > 0) low = beta;
     else high = beta;
     let next = beta - f / slope;
+    if (Math.abs(next - beta) <= 4e-16 * Math.abs(next)) return next;
     if (!(next > low && next < high)) next = (low + high) / 2;
-    if (Math.abs(next - beta) <= 1e-15 * Math.max(1, Math.abs(beta))) return next;
+    if (high - low <= 4e-16 * Math.abs(next)) return next;
     beta = next;
   }
   return beta;
 }
 
-function split(z: readonly number[], K: readonly number[], beta: number): Split {
-  if (beta <= 0) return { vapourFraction: 0, x: z, y: z, K };
-  if (beta >= 1) return { vapourFraction: 1, x: z, y: z, K };
-  const x = z.map((zi, i) => zi / (1 + beta * (K[i]! - 1)));
-  return { vapourFraction: beta, x, y: x.map((xi, i) => xi * K[i]!), K };
+function split(z: readonly number[], K: readonly number[], { vapour, liquid }: Shares): Split {
+  if (vapour <= 0) return { vapourFraction: 0, x: z, y: z, K };
+  if (liquid <= 0) return { vapourFraction: 1, x: z, y: z, K };
+  const x = z.map((zi, i) => zi / (liquid + vapour * K[i]!));
+  return { vapourFraction: vapour, x, y: x.map((xi, i) => xi * K[i]!), K };
 }
+
+const onlyVapour: Shares = { vapour: 2, liquid: -1 };
+const onlyLiquid: Shares = { vapour: -1, liquid: 2 };
 
 export function flashIdeal(ideal: IdealMixture, z: readonly number[], T: number, P: number): Split {
   ideal.evaluate(T);
@@ -82,14 +104,14 @@ export function flashPengRobinson(
     return split(
       z,
       z.map(() => NaN),
-      2,
+      onlyVapour,
     );
   const bubble = saturate(new SaturationLine(components, z, 'liquid', pr), 'temperature', T);
   if (bubble.kind === 'solved' && P >= Math.exp(bubble.point[components.length + 1]!))
     return split(
       z,
       z.map(() => NaN),
-      -1,
+      onlyLiquid,
     );
   const n = components.length;
   const guesses: number[][] = [];
@@ -118,7 +140,7 @@ export function flashPengRobinson(
   return split(
     z,
     z.map(() => NaN),
-    T > pseudoCritical ? 2 : -1,
+    T > pseudoCritical ? onlyVapour : onlyLiquid,
   );
 }
 
@@ -150,7 +172,7 @@ function solveSplit(
   };
   let beta = 0.5;
   for (let step = 0; step < 12; step++) {
-    beta = rachfordRice(z, Float64Array.from(lnK, Math.exp));
+    beta = rachfordRice(z, Float64Array.from(lnK, Math.exp)).vapour;
     if (!Number.isFinite(beta)) return undefined;
     fill(beta);
     pr.evaluate(T, P, x, 'liquid', liquid);
@@ -158,7 +180,7 @@ function solveSplit(
     for (let i = 0; i < n; i++) lnK[i] = liquid.lnPhi[i]! - vapour.lnPhi[i]!;
     if (!lnK.some((value) => Math.abs(value) > 1e-7)) return undefined;
   }
-  beta = rachfordRice(z, Float64Array.from(lnK, Math.exp));
+  beta = rachfordRice(z, Float64Array.from(lnK, Math.exp)).vapour;
   if (!Number.isFinite(beta)) return undefined;
   const m = n + 1;
   const J = new Float64Array(m * m),

@@ -1,6 +1,6 @@
 import type { EquilibriumWarning } from './errors';
 import { EquilibriumError } from './errors';
-import { vapourPressureOf, type VapourPressure } from './vapour-pressure';
+import { evaluateLogPressure, vapourPressureOf, type VapourPressure } from './vapour-pressure';
 
 /** Lowest and highest temperature a saturation temperature is looked for at [K]. */
 const coldest = 30;
@@ -17,25 +17,29 @@ export class IdealMixture {
   /** ln(P_sat/Pa) and d ln P_sat/dT [1/K] at the temperature last evaluated. */
   readonly logP: Float64Array;
   readonly slope: Float64Array;
+  /** Ranges stated for the rows in use, and above which temperature another row steps in. */
+  readonly #low: Float64Array;
+  readonly #high: Float64Array;
 
   constructor(ids: readonly string[], chosen: Readonly<Record<string, string>> = {}) {
     this.correlations = ids.map((id) => vapourPressureOf(id, chosen[id]));
     this.n = ids.length;
     this.logP = new Float64Array(this.n);
     this.slope = new Float64Array(this.n);
+    this.#low = Float64Array.from(this.correlations, ({ row }) => row.low);
+    this.#high = Float64Array.from(this.correlations, ({ row }) => row.high);
   }
 
   /** @throws EquilibriumError where a chosen correlation has no value at T */
   evaluate(T: number): void {
+    const { logP, slope, correlations } = this;
     for (let i = 0; i < this.n; i++) {
-      const { value, slope } = this.correlations[i]!.at(T);
-      if (Number.isNaN(value))
+      evaluateLogPressure(correlations[i]!.rowAt(T), T, logP, slope, i);
+      if (Number.isNaN(logP[i]))
         throw new EquilibriumError(
           'no-two-phase-solution',
-          `${this.correlations[i]!.row.id} has no value at ${T.toFixed(2)} K, above its critical temperature; leave the choice of correlation open.`,
+          `${correlations[i]!.row.id} has no value at ${T.toFixed(2)} K, above its critical temperature; leave the choice of correlation open.`,
         );
-      this.logP[i] = value;
-      this.slope[i] = slope;
     }
   }
 
@@ -102,7 +106,16 @@ export class IdealMixture {
     return this.correlations.reduce((lowest, correlation) => Math.min(lowest, correlation.highest), hottest);
   }
 
-  warnings(T: number): EquilibriumWarning[] {
-    return this.correlations.flatMap((correlation) => correlation.warning(T) ?? []);
+  /** Correlations used outside the range their source states; the usual answer, none, is always the same array. */
+  warnings(T: number): readonly EquilibriumWarning[] {
+    let found: EquilibriumWarning[] | undefined;
+    for (let i = 0; i < this.n; i++) {
+      if (T >= this.#low[i]! && T <= this.#high[i]!) continue;
+      const warning = this.correlations[i]!.warning(T);
+      if (warning) (found ??= []).push(warning);
+    }
+    return found ?? noWarnings;
   }
 }
+
+const noWarnings: readonly EquilibriumWarning[] = [];

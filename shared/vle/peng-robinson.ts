@@ -28,8 +28,9 @@ export type Phase = 'liquid' | 'vapour';
 
 /** ln φ of every component in one phase, with its slopes; arrays are reused by the next call on the same object. */
 export interface PhaseState {
-  /** Compressibility factor of the root taken. */
+  /** Compressibility factor of the root taken, and the dimensionless co-volume bP/RT. */
   Z: number;
+  B: number;
   readonly lnPhi: Float64Array;
   /** ∂ ln φ/∂T [1/K], ∂ ln φ/∂P [1/Pa]. */
   readonly dT: Float64Array;
@@ -94,6 +95,7 @@ export class PengRobinson {
     const { n } = this;
     return {
       Z: NaN,
+      B: NaN,
       lnPhi: new Float64Array(n),
       dT: new Float64Array(n),
       dP: new Float64Array(n),
@@ -158,6 +160,7 @@ export class PengRobinson {
       B = (b * P) / RT;
     const Z = cubicRoot(A, B, phase);
     out.Z = Z;
+    out.B = B;
     const FZ = 3 * Z * Z - 2 * (1 - B) * Z + (A - 3 * B * B - 2 * B);
     const FA = Z - B;
     const FB = Z * Z - (6 * B + 2) * Z - A + 2 * B + 3 * B * B;

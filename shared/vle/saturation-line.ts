@@ -57,14 +57,14 @@ export class SaturationLine {
 
   /**
    * Newton on all unknowns with `u[held] = value`.
+   * @param longest step in ln K and ln P; a fifteenth of it in ln T
    * @returns number of iterations, or 0 when it did not converge; `u` is changed in place
    */
-  solve(u: LinePoint, held: number, value: number, most = 30): number {
+  solve(u: LinePoint, held: number, value: number, most = 60, longest = 3): number {
     const { n } = this;
     const m = n + 2;
     const J = this.#jacobian,
       r = this.#residual;
-    let last = Infinity;
     for (let iteration = 1; iteration <= most; iteration++) {
       this.#fillSystem(u, held, value);
       let norm = 0;
@@ -74,12 +74,14 @@ export class SaturationLine {
       let largest = 0;
       for (let i = 0; i < m; i++) largest = Math.max(largest, Math.abs(r[i]!));
       if (!Number.isFinite(largest)) return 0;
-      // Long steps are cut: ln K may move by a few, T and P by a factor.
-      const factor = largest > 1 ? 1 / largest : 1;
+      // Long steps are cut, those of the temperature most.
+      let factor = 1;
+      for (let i = 0; i < m; i++)
+        factor = Math.min(factor, (i === n ? longest / 15 : longest) / Math.abs(r[i]!));
       for (let i = 0; i < m; i++) u[i]! -= factor * r[i]!;
-      // Past the quadratic stage the step only carries round-off.
-      if (largest < 1e-13 || (largest < 1e-10 && largest >= last)) return iteration;
-      last = largest;
+      // Newton squares the error: after a step this small nothing but round-off is left, which near the critical point,
+      // where the system is all but singular, is more than elsewhere.
+      if (largest < 1e-13 || (largest < 1e-7 && norm < 1e-11)) return iteration;
     }
     return 0;
   }
@@ -111,6 +113,19 @@ export class SaturationLine {
     for (let j = 0; j < n; j++) J[n * m + j] = sign * w[j]!;
     r[n + 1] = u[held]! - value;
     J[(n + 1) * m + held] = 1;
+  }
+
+  /**
+   * Whether the phases of a solved point are a vapour and a liquid: the vapour fills more than three times its co-volume
+   * (the critical point of the equation lies at 3.95), and more than the liquid. Two liquids are no answer here.
+   */
+  isVapourOverLiquid(u: LinePoint): boolean {
+    const [T, P] = [Math.exp(u[this.n]!), Math.exp(u[this.n + 1]!)];
+    this.#pr.evaluate(T, P, this.feed, this.feedPhase, this.#feed);
+    this.#pr.evaluate(T, P, this.incipient(u), this.#otherPhase, this.#other);
+    const [vapour, liquid] =
+      this.feedPhase === 'vapour' ? [this.#feed, this.#other] : [this.#other, this.#feed];
+    return vapour.Z > 3 * vapour.B && vapour.Z / vapour.B > liquid.Z / liquid.B;
   }
 
   /** du/d(held) along the line at a solved point. */

@@ -20,7 +20,8 @@ export function saturate(line: SaturationLine, held: 'temperature' | 'pressure',
   const guess = wilsonPoint(line.components, line, held, value);
   if (guess) {
     const point = guess.slice();
-    if (line.solve(point, index, target) > 0 && isOrdinary(point, n)) return { kind: 'solved', point };
+    if (line.solve(point, index, target) > 0 && isOrdinary(point, n) && line.isVapourOverLiquid(point))
+      return { kind: 'solved', point };
   }
   return follow(line, index, target);
 }
@@ -31,6 +32,9 @@ function isOrdinary(u: LinePoint, n: number): boolean {
   for (let i = 0; i < n; i++) spread = Math.max(spread, Math.abs(u[i]!));
   return spread > 0.5;
 }
+
+/** No line is followed from below this [Pa]: less than a molecule in a drum. */
+const lowestPressure = 1e-30;
 
 /** ln K of Wilson's correlation. @source wilson1969 */
 function wilson(component: Component, T: number, lnP: number): number {
@@ -93,16 +97,16 @@ export function walkLine(
 ): 'stopped' | 'ended' | 'no-start' {
   const { n } = line;
   let u: LinePoint | undefined;
-  for (let P = startPressure; P > 1e-6 && !u; P /= 100) {
+  for (let P = startPressure; P > lowestPressure && !u; P /= 100) {
     const guess = wilsonPoint(line.components, line, 'pressure', P);
-    if (guess && line.solve(guess, n + 1, Math.log(P), 60) > 0) u = guess;
+    if (guess && line.solve(guess, n + 1, Math.log(P)) > 0 && line.isVapourOverLiquid(guess)) u = guess;
   }
   if (!u) return 'no-start';
   if (visit(u, undefined)) return 'stopped';
   let held = n + 1;
   let direction = 1;
   let step = Math.min(0.4, longestStep);
-  for (let count = 0; count < 2000; count++) {
+  for (let count = 0; count < 500; count++) {
     const tangent = line.tangent(u, held);
     if (!tangent) return 'ended';
     // Hold whatever moves fastest along the line; that keeps every other unknown a smooth function of it.
@@ -119,7 +123,7 @@ export function walkLine(
     while (!trial) {
       const candidate = u.slice();
       for (let i = 0; i < n + 2; i++) candidate[i]! += direction * step * tangent[i]!;
-      iterations = line.solve(candidate, held, candidate[held]!, 12);
+      iterations = line.solve(candidate, held, candidate[held]!, 12, 5);
       // A step onto the trivial solution, or a leap along the line, is taken again in halves.
       if (iterations > 0 && !isTrivial(candidate, n) && distance(candidate, u) < 4 * step + 0.05)
         trial = candidate;
@@ -129,7 +133,8 @@ export function walkLine(
     u = trial;
     if (iterations <= 4) step = Math.min(step * 1.6, longestStep);
     else if (iterations > 7) step /= 2;
-    if (u[n + 1]! > Math.log(3e9) || u[n]! < Math.log(20) || u[n + 1]! < Math.log(1e-8)) return 'ended';
+    if (u[n + 1]! > Math.log(3e9) || u[n]! < Math.log(20) || u[n + 1]! < Math.log(lowestPressure))
+      return 'ended';
   }
   return 'ended';
 }
@@ -151,6 +156,13 @@ function crossesCritical(u: LinePoint, before: LinePoint, n: number): boolean {
   let widest = 0;
   for (let i = 1; i < n; i++) if (Math.abs(before[i]!) > Math.abs(before[widest]!)) widest = i;
   return n > 1 && Math.sign(u[widest]!) !== Math.sign(before[widest]!);
+}
+
+/** A pressure at which the line has not come as far as the target yet [Pa]. */
+function startBelow(line: SaturationLine, index: number, target: number): number {
+  if (index === line.n + 1) return Math.min(1e4, Math.exp(target) / 2);
+  const colder = wilsonPoint(line.components, line, 'temperature', 0.9 * Math.exp(target));
+  return colder ? Math.min(1e4, Math.max(Math.exp(colder[line.n + 1]!), 100 * lowestPressure)) : 1e4;
 }
 
 function follow(line: SaturationLine, index: number, target: number): LineOutcome {
@@ -178,7 +190,7 @@ function follow(line: SaturationLine, index: number, target: number): LineOutcom
       }
       return crossesCritical(u, before, n);
     },
-    index === n + 1 ? Math.min(1e4, Math.exp(target) / 2) : 1e4,
+    startBelow(line, index, target),
   );
   if (answer) return { kind: 'solved', point: answer };
   if (wentWrong || ended === 'no-start') return { kind: 'not-converged' };

@@ -13,6 +13,8 @@ export interface VapourPressureRow {
   /** The critical point that belongs to a Wagner row; it may differ from the component's. */
   readonly criticalTemperature?: number;
   readonly criticalPressure?: number;
+  /** ln of that pressure, kept beside it since every evaluation needs it. */
+  readonly logCriticalPressure?: number;
   /** Range the source states [K]. */
   readonly low: number;
   readonly high: number;
@@ -21,11 +23,22 @@ export interface VapourPressureRow {
   readonly note: string;
 }
 
-const byId = new Map(vapourPressureRows.map((row) => [row.id, row]));
+const rows: readonly VapourPressureRow[] = vapourPressureRows.map((row) =>
+  row.criticalPressure === undefined ? row : { ...row, logCriticalPressure: Math.log(row.criticalPressure) },
+);
+const byId = new Map(rows.map((row) => [row.id, row]));
+
+/** Rows by component, first choice first. */
+const byComponent = new Map<string, VapourPressureRow[]>();
+for (const row of [...rows].sort((a, b) => a.rank - b.rank)) {
+  const own = byComponent.get(row.componentId);
+  if (own) own.push(row);
+  else byComponent.set(row.componentId, [row]);
+}
 
 /** A component's rows, first choice first. */
 export function correlationsOf(componentId: string): readonly VapourPressureRow[] {
-  return vapourPressureRows.filter((row) => row.componentId === componentId).sort((a, b) => a.rank - b.rank);
+  return byComponent.get(componentId) ?? [];
 }
 
 /** @throws EquilibriumError when there is no such row, or it belongs to another component */
@@ -47,35 +60,56 @@ export interface LogPressure {
 
 /** Evaluates one row as it stands, inside its range or not. */
 export function logPressure(row: VapourPressureRow, T: number): LogPressure {
-  const [a = 0, b = 0, c = 0, d = 0, e = 0] = row.coefficients;
-  switch (row.equation) {
-    case 'wagner_2.5_5':
-      return wagner(row, T, [a, b, c, d], 2.5, 5);
-    case 'wagner_3_6':
-      return wagner(row, T, [a, b, c, d], 3, 6);
-    case 'dippr_101':
-      return {
-        value: a + b / T + c * Math.log(T) + d * T ** e,
-        slope: -b / (T * T) + c / T + d * e * T ** (e - 1),
-      };
-    case 'antoine':
-      return { value: Math.LN10 * (a - b / (T + c)), slope: (Math.LN10 * b) / (T + c) ** 2 };
-  }
+  const value = new Float64Array(1);
+  const slope = new Float64Array(1);
+  evaluateLogPressure(row, T, value, slope, 0);
+  return { value: value[0]!, slope: slope[0]! };
 }
 
-function wagner(
+/** The same without an object a call: `value[at]` and `slope[at]` are written. */
+export function evaluateLogPressure(
   row: VapourPressureRow,
   T: number,
-  [a, b, c, d]: readonly [number, number, number, number],
-  m: number,
-  n: number,
-): LogPressure {
-  const Tc = row.criticalTemperature!;
-  const t = 1 - T / Tc;
-  if (t < 0) return { value: NaN, slope: NaN };
-  const f = a * t + b * t ** 1.5 + c * t ** m + d * t ** n;
-  const df = a + 1.5 * b * Math.sqrt(t) + m * c * t ** (m - 1) + n * d * t ** (n - 1);
-  return { value: Math.log(row.criticalPressure!) + (f * Tc) / T, slope: -df / T - (f * Tc) / (T * T) };
+  value: Float64Array,
+  slope: Float64Array,
+  at: number,
+): void {
+  const k = row.coefficients;
+  const [a, b, c] = [k[0]!, k[1]!, k[2]!];
+  switch (row.equation) {
+    case 'wagner_2.5_5': {
+      const Tc = row.criticalTemperature!;
+      const t = 1 - T / Tc;
+      const root = Math.sqrt(t);
+      const d = k[3]!;
+      const t2 = t * t;
+      const f = t * (a + b * root + c * t * root + d * t2 * t2);
+      value[at] = row.logCriticalPressure! + (f * Tc) / T;
+      slope[at] = -(a + 1.5 * b * root + 2.5 * c * t * root + 5 * d * t2 * t2) / T - (f * Tc) / (T * T);
+      return;
+    }
+    case 'wagner_3_6': {
+      const Tc = row.criticalTemperature!;
+      const t = 1 - T / Tc;
+      const root = Math.sqrt(t);
+      const d = k[3]!;
+      const t2 = t * t;
+      const f = t * (a + b * root + c * t2 + d * t2 * t2 * t);
+      value[at] = row.logCriticalPressure! + (f * Tc) / T;
+      slope[at] = -(a + 1.5 * b * root + 3 * c * t2 + 6 * d * t2 * t2 * t) / T - (f * Tc) / (T * T);
+      return;
+    }
+    case 'dippr_101': {
+      const [d, e] = [k[3]!, k[4]!];
+      const power = e === 2 ? T * T : e === 6 ? (T * T * T) ** 2 : T ** e;
+      value[at] = a + b / T + c * Math.log(T) + d * power;
+      slope[at] = (-b / T + c + d * e * power) / T;
+      return;
+    }
+    case 'antoine':
+      value[at] = Math.LN10 * (a - b / (T + c));
+      slope[at] = (Math.LN10 * b) / (T + c) ** 2;
+  }
 }
 
 /** The correlation of one component in use: the row asked for, else the first choice with its stand-in above the critical temperature. */
@@ -95,6 +129,18 @@ export interface VapourPressure {
     readonly inRange: boolean;
   };
   warning(T: number): EquilibriumWarning | undefined;
+}
+
+/** One warning a row, made when it is first needed: a sensor may ask for it each minute. */
+const warnings = new Map<string, EquilibriumWarning>();
+
+function warningOf(row: VapourPressureRow): EquilibriumWarning {
+  let known = warnings.get(row.id);
+  if (!known) {
+    const message = `${row.componentId}: ${row.id} is stated for ${row.low} to ${row.high} K and is used outside that range.`;
+    warnings.set(row.id, (known = { code: 'correlation-out-of-range', component: row.componentId, message }));
+  }
+  return known;
 }
 
 /**
@@ -133,13 +179,6 @@ export function vapourPressureOf(componentId: string, rowId?: string): VapourPre
         );
       return { pressure, row: rowAt(T), inRange: inRange(T) };
     },
-    warning: (T) =>
-      inRange(T)
-        ? undefined
-        : {
-            code: 'correlation-out-of-range',
-            component: componentId,
-            message: `${componentId}: ${rowAt(T).id} is stated for ${rowAt(T).low} to ${rowAt(T).high} K and is used at ${T.toFixed(2)} K.`,
-          },
+    warning: (T) => (inRange(T) ? undefined : warningOf(rowAt(T))),
   };
 }
