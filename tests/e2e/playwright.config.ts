@@ -8,7 +8,7 @@ export default defineConfig({
   outputDir: '../../test-results',
   // Each story has a plant of its own; two at once fit two cores.
   workers: 2,
-  timeout: 90_000,
+  timeout: 180_000,
   expect: { timeout: 15_000 },
   reporter: [['list'], ['json']],
   use: browser,
