@@ -21,7 +21,7 @@ import { checkSample } from '@shared/correction/check-sample';
 import { components, componentById } from '@shared/vle/components';
 import { describeFailure } from '../core/api-error';
 import { Clock } from '../core/clock';
-import { PlantMoment } from './plant-moment';
+import { PlantMoment } from '../ui/plant-moment';
 import { pastedFractions, typedFractions, type TypedFraction } from './sample-draft';
 
 /** Where a sample may be drawn, with what its sensors need to know of it. */

@@ -69,7 +69,7 @@ export class NextMoveCard {
       target: this.quantities.fraction(move.target, this.decimals()),
       pressure: this.quantities.pressure(move.pressure),
       pressureInstead:
-        move.pressureInstead === null ? null : this.quantities.pressureChange(move.pressureInstead, 0),
+        move.pressureInstead === null ? null : this.quantities.pressureChange(move.pressureInstead),
     };
   });
 }

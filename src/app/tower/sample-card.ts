@@ -4,6 +4,7 @@ import { RouterLink } from '@angular/router';
 import { sample, samplesPath } from '@shared/api/samples';
 import type { SensorDetail, Trend } from '@shared/api/sensors';
 import { AgeText } from '../ui/age-text';
+import { offsetWords } from '../ui/offset-words';
 import { Quantities } from '../ui/quantities';
 import { SampleSign } from '../ui/sample-sign';
 
@@ -61,10 +62,11 @@ export class SampleCard {
     const { id, version } = this.sensor();
     const own = this.whole()?.corrections.find((correction) => correction.sensorId === id);
     if (own?.decision !== 'used') return '';
-    const isKelvin = version?.parameters.correction.domain === 'temperature';
-    const text = (offset: number) =>
-      isKelvin ? this.quantities.temperatureChange(offset, 2) : offset.toFixed(4);
-    const unit = isKelvin ? this.quantities.temperatureChangeUnit() : '';
-    return `It moved the offset from ${text(own.offsetBefore)} to ${text(own.offsetAfter)} ${unit}.`;
+    const words = offsetWords(version?.parameters.correction.domain, this.quantities);
+    const sure = (variance: number) => words.text(2 * Math.sqrt(variance)).replace('+', '');
+    return [
+      `It moved the offset from ${words.text(own.offsetBefore)} to ${words.text(own.offsetAfter)}.`,
+      `The offset is now known within ${sure(own.varianceAfter)} (95 %), before within ${sure(own.varianceBefore)}.`,
+    ].join(' ');
   });
 }

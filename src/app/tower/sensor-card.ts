@@ -3,6 +3,7 @@ import type { SensorDetail } from '@shared/api/sensors';
 import { componentById } from '@shared/vle/components';
 import { Clock } from '../core/clock';
 import { PlantTime } from '../core/plant-time';
+import { offsetWords } from '../ui/offset-words';
 import { Quantities } from '../ui/quantities';
 
 /** What the sensor is made of: version, method, tags, groups. */
@@ -60,7 +61,7 @@ export class SensorCard {
         .filter((part) => part.group === which)
         .map((part) => componentById(part.id).short)
         .join(', ');
-    const isKelvin = parameters.correction.domain === 'temperature';
+    const offset = offsetWords(parameters.correction.domain, this.quantities);
     return [
       {
         name: 'version',
@@ -84,9 +85,7 @@ export class SensorCard {
         ? [
             {
               name: 'offset in force',
-              text: isKelvin
-                ? `${this.quantities.temperatureChange(latest.offset, 2)} ${this.quantities.temperatureChangeUnit()}, ± ${this.quantities.temperatureChange(2 * latest.offsetDeviation, 2).replace('+', '')} (95 %)`
-                : latest.offset.toFixed(4),
+              text: `${offset.text(latest.offset)}, ± ${offset.text(2 * latest.offsetDeviation).replace('+', '')} (95 %)`,
               isNumber: true,
             },
           ]

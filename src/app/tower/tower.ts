@@ -24,9 +24,11 @@ import {
   sensorList,
   sensorsPath,
   trend,
+  type Estimate,
   type SensorDetail,
   type Trend,
 } from '@shared/api/sensors';
+import { describeFailure } from '../core/api-error';
 import { Clock } from '../core/clock';
 import { Live } from '../core/live';
 import { PlantTime } from '../core/plant-time';
@@ -174,6 +176,17 @@ export class Tower {
     const sensor = this.current();
     return sensor ? chanceWords(sensor) : '';
   });
+  /** How the value stands to its limit. */
+  protected readonly verdict = computed(() => {
+    const sensor = this.current();
+    const value = sensor?.latest?.value;
+    if (!sensor || value == null) return null;
+    const { high, low } = sensor.limits;
+    if (high !== null && value > high) return { words: 'above', limit: high, isOff: true };
+    if (low !== null && value < low) return { words: 'below', limit: low, isOff: true };
+    if (high !== null) return { words: 'within', limit: high, isOff: false };
+    return low === null ? null : { words: 'within', limit: low, isOff: false };
+  });
   protected readonly staleFor = computed(() => {
     const sensor = this.current();
     return sensor?.latest && isStale(sensor, this.clock.now())
@@ -194,6 +207,7 @@ export class Tower {
     this.live.events.pipe(takeUntilDestroyed()).subscribe((event) => {
       const id = untracked(this.sensorId);
       if (event.type === 'sensor' && event.sensor.id === id) {
+        if (untracked(() => this.misses(event.sensor.latest))) return this.readAgain();
         this.current.update((known) => known && { ...known, ...event.sensor });
         // The next move depends on this minute's pressure; the server works it out.
         this.detail.reload();
@@ -207,8 +221,20 @@ export class Tower {
     this.live.reconnected.pipe(takeUntilDestroyed()).subscribe(() => this.readAgain());
   }
 
+  /** Whether minutes lie between the trend and this one: the server caught up with many, and said so only of the last. */
+  private misses(latest: Estimate | null): boolean {
+    const trend = this.shownTrend();
+    const last = trend?.inferred.t.at(-1);
+    if (!trend || !latest || last === undefined || this.window().kind !== 'live') return false;
+    return latest.t - last > (trend.bucketMinutes + 1) * 60_000;
+  }
+
   protected readAgain(): void {
     this.readings.update((count) => count + 1);
+  }
+
+  protected failure(error: unknown): string {
+    return describeFailure(error).words;
   }
 
   protected fraction(value: number): string {

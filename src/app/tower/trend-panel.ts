@@ -1,34 +1,25 @@
 import { ChangeDetectionStrategy, Component, computed, inject, input, model, signal } from '@angular/core';
 import { MatButton } from '@angular/material/button';
-import type { EChartsCoreOption, EChartsType } from 'echarts/core';
-import { NgxEchartsDirective } from 'ngx-echarts';
 import type { SensorDetail, Trend } from '@shared/api/sensors';
 import { Clock } from '../core/clock';
-import { PlantTime } from '../core/plant-time';
+import { PlantTime, zoneName } from '../core/plant-time';
 import { Preferences } from '../core/preferences';
 import { chartColours } from '../ui/chart-colours';
-import { provideCharts } from '../ui/provide-charts';
 import { Quantities } from '../ui/quantities';
 import { SampleSign } from '../ui/sample-sign';
-import { toTrendOption, type TrendPicture, type TrendWords } from './trend-option';
+import { TrendChart, type TrendStep } from '../ui/trend-chart/trend-chart';
+import type { TrendPicture } from '../ui/trend-chart/trend-picture';
 import { TrendTable } from './trend-table';
-import { endsOf, moved, trendSpans, zoomed, type TrendWindow } from './trend-window';
+import { endsOf, lookedAt, moved, trendSpans, zoomed, type TrendWindow } from './trend-window';
+import { trendWords } from './trend-words';
 
-/** What the chart tells of a wheel or drag. */
-interface ZoomEvent {
-  readonly batch?: readonly { readonly start?: number; readonly end?: number }[];
-  readonly start?: number;
-  readonly end?: number;
-}
+/** Below this width of the window the picture has less to its sides [px]. */
+const narrow = 700;
 
-/** Finer data are fetched once the wheel has rested this long. */
-const settleMs = 350;
-
-/** The trend with its controls: how long, where, closer; by button, wheel and key. */
+/** The trend with its controls: how long, where, closer; by button, wheel, drag and key. */
 @Component({
   selector: 'app-trend-panel',
-  imports: [MatButton, NgxEchartsDirective, SampleSign, TrendTable],
-  providers: [provideCharts()],
+  imports: [MatButton, SampleSign, TrendChart, TrendTable],
   changeDetection: ChangeDetectionStrategy.OnPush,
   templateUrl: './trend-panel.html',
   styleUrl: './trend-panel.scss',
@@ -49,77 +40,37 @@ export class TrendPanel {
 
   protected readonly spans = trendSpans;
   protected readonly states = ['used', 'held', 'rejected', 'pending'] as const;
-  protected readonly isNarrow = signal(innerWidth < 700);
+  private readonly isNarrow = signal(innerWidth < narrow);
+  private readonly isTouched = matchMedia('(pointer: coarse)').matches;
   protected readonly isLive = computed(() => this.window().kind === 'live');
   protected readonly stretchWords = computed(() => {
     const { from, to } = this.ends();
     const now = this.clock.minute();
     return `${this.plantTime.dateTime(from, now)} to ${this.isLive() ? 'now' : this.plantTime.dateTime(to, now)}`;
   });
-
-  private readonly words = computed((): TrendWords => {
-    const { quantities, plantTime, sensor } = this;
-    const decimals = quantities.fractionDecimals(sensor().limits.high ?? sensor().latest?.value ?? 0);
-    const now = this.clock.minute();
-    const offsetUnit = {
-      temperature: quantities.temperatureChangeUnit(),
-      fraction: 'mol/mol',
-      'ln-fraction': 'ln units',
-    }[sensor().version?.parameters.correction.domain ?? 'temperature'];
-    const isKelvin = (sensor().version?.parameters.correction.domain ?? 'temperature') === 'temperature';
+  protected readonly words = computed(() =>
+    trendWords(this.sensor(), this.quantities, this.plantTime, this.clock.minute()),
+  );
+  protected readonly picture = computed((): TrendPicture => {
+    const { limits, symbol } = this.sensor();
+    const ends = this.ends();
     return {
-      fraction: (value) => quantities.toFraction(value),
-      fractionUnit: quantities.fractionUnit(),
-      temperature: (value) => quantities.toTemperature(value),
-      temperatureUnit: quantities.temperatureUnit(),
-      pressure: (value) => quantities.toPressure(value),
-      pressureUnit: quantities.pressureUnit(),
-      offset: (value) => (isKelvin ? quantities.toTemperatureChange(value) : value),
-      offsetUnit,
-      zoneOffset: plantTime.offset(this.ends().to),
-      axisTime: (t) => {
-        const time = plantTime.clockTime(t);
-        return time === '00:00' ? (plantTime.dateTime(t, now).split(',')[0] ?? time) : time;
-      },
-      fullTime: (t) => plantTime.dateTime(t, now),
-      fractionText: (value) => quantities.fraction(value, decimals),
+      trend: this.trend(),
+      symbol,
+      limits,
+      ...ends,
+      latest: endsOf({ kind: 'live', span: ends.to - ends.from }, this.clock.minute()).to,
+      isNarrow: this.isNarrow(),
+      canDrag: !this.isTouched,
     };
   });
-  private readonly picture = computed((): TrendPicture => {
-    const { limits, symbol } = this.sensor();
-    return { trend: this.trend(), symbol, limits, ...this.ends(), isNarrow: this.isNarrow() };
+  protected readonly colours = computed(() => chartColours(this.preferences.isNight()));
+  /** Both names where the clocks were changed in between. */
+  protected readonly zoneWords = computed(() => {
+    const { from, to } = this.ends();
+    const { zone } = this.plantTime;
+    return [...new Set([zoneName(from, zone), zoneName(to, zone)])].join(' and ');
   });
-  protected readonly option = computed((): EChartsCoreOption =>
-    toTrendOption(this.picture(), this.words(), chartColours(this.preferences.isNight())),
-  );
-  protected readonly zoneWords = computed(() =>
-    this.plantTime.timeWithZone(this.ends().to).split(' ').at(-1),
-  );
-
-  private chart: EChartsType | undefined;
-  private settling: ReturnType<typeof setTimeout> | undefined;
-
-  protected take(chart: EChartsType): void {
-    this.chart = chart;
-  }
-
-  /** Follows the wheel: looks at what it left in view, and fetches it finer. */
-  protected zoomedByHand(event: ZoomEvent): void {
-    const { start = 0, end = 100 } = event.batch?.[0] ?? event;
-    clearTimeout(this.settling);
-    if (start <= 0 && end >= 100) return;
-    this.settling = setTimeout(() => {
-      const { from, to } = this.ends();
-      const span = to - from;
-      const next = {
-        kind: 'past' as const,
-        from: Math.round(from + (span * start) / 100),
-        to: Math.round(from + (span * end) / 100),
-      };
-      this.chart?.dispatchAction({ type: 'dataZoom', start: 0, end: 100 });
-      this.look(next.to >= this.clock.minute() ? { kind: 'live', span: next.to - next.from } : next);
-    }, settleMs);
-  }
 
   protected isSpan(span: number): boolean {
     const window = this.window();
@@ -127,27 +78,42 @@ export class TrendPanel {
   }
 
   protected show(span: number): void {
-    this.look({ kind: 'live', span });
+    this.window.set({ kind: 'live', span });
   }
 
-  protected zoom(factor: number): void {
-    this.look(zoomed(this.window(), factor, this.clock.minute()));
+  protected look(ends: { from: number; to: number }): void {
+    this.window.set(lookedAt(ends, this.clock.minute()));
   }
 
-  protected move(share: number): void {
-    this.look(moved(this.window(), share, this.clock.minute()));
-  }
-
-  protected toNow(): void {
-    const { from, to } = endsOf(this.window(), this.clock.minute());
-    this.look({ kind: 'live', span: to - from });
+  protected take(step: TrendStep): void {
+    switch (step) {
+      case 'earlier':
+        return this.move(-0.5);
+      case 'later':
+        return this.isLive() ? undefined : this.move(0.5);
+      case 'closer':
+        return this.zoom(0.5);
+      case 'wider':
+        return this.zoom(2);
+      case 'now':
+        return this.toNow();
+    }
   }
 
   protected measure(): void {
-    this.isNarrow.set(innerWidth < 700);
+    this.isNarrow.set(innerWidth < narrow);
   }
 
-  private look(window: TrendWindow): void {
-    this.window.set(window);
+  private zoom(factor: number): void {
+    this.window.set(zoomed(this.window(), factor, this.clock.minute()));
+  }
+
+  private move(share: number): void {
+    this.window.set(moved(this.window(), share, this.clock.minute()));
+  }
+
+  private toNow(): void {
+    const window = this.window();
+    if (window.kind === 'past') this.show(window.to - window.from);
   }
 }

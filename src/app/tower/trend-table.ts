@@ -1,10 +1,9 @@
-import { ChangeDetectionStrategy, Component, computed, inject, input, signal } from '@angular/core';
+import { ChangeDetectionStrategy, Component, computed, input, signal } from '@angular/core';
 import type { Trend } from '@shared/api/sensors';
 import { qualities } from '@shared/inference/quality';
-import { Clock } from '../core/clock';
-import { PlantTime } from '../core/plant-time';
 import { noNumber } from '../ui/numbers';
-import { Quantities } from '../ui/quantities';
+import type { TrendWords } from '../ui/trend-chart/trend-picture';
+import { nearest } from '../ui/trend-chart/trend-tooltip';
 
 /** About how many rows to read out: a table of every minute helps nobody. */
 const mostRows = 24;
@@ -20,14 +19,17 @@ const mostRows = 24;
         <div class="scroll" tabindex="0" role="region" aria-label="The trend as a table">
           <table>
             <caption class="for-ears">
-              Newest values first
+              The stretch of the picture, newest first
             </caption>
             <thead>
               <tr>
                 <th scope="col">time</th>
-                <th scope="col">{{ symbol() }}, {{ quantities.fractionUnit() }}</th>
+                <th scope="col">{{ symbol() }}, {{ words().fractionUnit }}</th>
                 <th scope="col">band, 95 %</th>
                 <th scope="col">quality</th>
+                <th scope="col">temperature, {{ words().temperatureUnit }}</th>
+                <th scope="col">pressure, {{ words().pressureUnit }}</th>
+                <th scope="col">offset, {{ words().offsetUnit }}</th>
               </tr>
             </thead>
             <tbody>
@@ -37,14 +39,42 @@ const mostRows = 24;
                   <td class="num">{{ row.value }}</td>
                   <td class="num">{{ row.band }}</td>
                   <td>{{ row.quality }}</td>
+                  <td class="num">{{ row.temperature }}</td>
+                  <td class="num">{{ row.pressure }}</td>
+                  <td class="num">{{ row.offset }}</td>
                 </tr>
               } @empty {
                 <tr>
-                  <td colspan="4">No values in this stretch.</td>
+                  <td colspan="7">No values in this stretch.</td>
                 </tr>
               }
             </tbody>
           </table>
+          @if (samples().length > 0) {
+            <table>
+              <caption>
+                Laboratory samples drawn in this stretch
+              </caption>
+              <thead>
+                <tr>
+                  <th scope="col">drawn</th>
+                  <th scope="col">{{ symbol() }}, {{ words().fractionUnit }}</th>
+                  <th scope="col">state</th>
+                  <th scope="col">disagreement, σ</th>
+                </tr>
+              </thead>
+              <tbody>
+                @for (sample of samples(); track sample.id) {
+                  <tr>
+                    <td class="num">{{ sample.time }}</td>
+                    <td class="num">{{ sample.value }}</td>
+                    <td>{{ sample.state }}</td>
+                    <td class="num">{{ sample.sigma }}</td>
+                  </tr>
+                }
+              </tbody>
+            </table>
+          }
         </div>
       }
     </details>
@@ -57,16 +87,21 @@ const mostRows = 24;
       cursor: pointer;
     }
     .scroll {
-      max-height: 320px;
+      max-height: 360px;
       overflow: auto;
     }
     table {
       border-collapse: collapse;
       width: 100%;
     }
+    caption:not(.for-ears) {
+      padding: 14px 0 4px;
+      font-weight: 500;
+      text-align: left;
+    }
     th,
     td {
-      padding: 4px 12px 4px 0;
+      padding: 4px 16px 4px 0;
       border-bottom: 1px solid var(--line);
       text-align: left;
       white-space: nowrap;
@@ -79,27 +114,55 @@ const mostRows = 24;
   `,
 })
 export class TrendTable {
-  private readonly plantTime = inject(PlantTime);
-  private readonly clock = inject(Clock);
-  protected readonly quantities = inject(Quantities);
-
   readonly trend = input.required<Trend>();
+  /** The stretch the picture shows [UTC ms]. */
+  readonly ends = input.required<{ from: number; to: number }>();
   readonly symbol = input.required<string>();
+  readonly words = input.required<TrendWords>();
 
   protected readonly isOpen = signal(false);
   protected readonly rows = computed(() => {
     if (!this.isOpen()) return [];
-    const { t, value, low, high, quality } = this.trend().inferred;
-    const step = Math.max(1, Math.ceil(t.length / mostRows));
-    const now = this.clock.minute();
-    const text = (fraction: number | null | undefined) =>
-      fraction == null ? noNumber : this.quantities.fraction(fraction);
-    return Array.from({ length: Math.ceil(t.length / step) }, (_, k) => t.length - 1 - k * step).map((i) => ({
-      t: t[i]!,
-      time: this.plantTime.dateTime(t[i]!, now),
-      value: text(value[i]),
-      band: low[i] == null ? noNumber : `${text(low[i])} to ${text(high[i])}`,
-      quality: qualities[quality[i]!],
-    }));
+    const { inferred, temperature, pressure, offset } = this.trend();
+    const { from, to } = this.ends();
+    const words = this.words();
+    const shown = inferred.t.flatMap((t, i) => (t >= from && t <= to ? [i] : [])).reverse();
+    const step = Math.max(1, Math.ceil(shown.length / mostRows));
+    const at = (series: Trend['temperature'], t: number, text: (value: number) => string) => {
+      const value = series.value[nearest(series.t, t)];
+      return value == null ? noNumber : text(value);
+    };
+    return shown
+      .filter((_, k) => k % step === 0)
+      .map((i) => {
+        const [t, value, low, high] = [inferred.t[i]!, inferred.value[i], inferred.low[i], inferred.high[i]];
+        return {
+          t,
+          time: words.fullTime(t),
+          value: value == null ? noNumber : words.fractionText(value),
+          band:
+            low == null || high == null
+              ? noNumber
+              : `${words.fractionText(low)} to ${words.fractionText(high)}`,
+          quality: qualities[inferred.quality[i]!],
+          temperature: at(temperature, t, words.temperatureText),
+          pressure: at(pressure, t, words.pressureText),
+          offset: at(offset, t, words.offsetText),
+        };
+      });
+  });
+  protected readonly samples = computed(() => {
+    const { from, to } = this.ends();
+    const words = this.words();
+    return this.trend()
+      .samples.filter((sample) => sample.drawnAt >= from && sample.drawnAt <= to)
+      .sort((a, b) => b.drawnAt - a.drawnAt)
+      .map(({ id, drawnAt, value, state, standardisedInnovation }) => ({
+        id,
+        time: words.fullTime(drawnAt),
+        value: words.fractionText(value),
+        state,
+        sigma: standardisedInnovation === null ? noNumber : standardisedInnovation.toFixed(1),
+      }));
   });
 }

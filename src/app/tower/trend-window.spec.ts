@@ -1,4 +1,4 @@
-import { endsOf, moved, zoomed } from './trend-window';
+import { endsOf, lookedAt, moved, zoomed } from './trend-window';
 
 const hour = 3_600_000;
 const now = 100 * hour;
@@ -24,6 +24,16 @@ describe('the window of the trend', () => {
     expect(zoomed({ kind: 'live', span: 12 * 60_000 }, 0.5, now)).toEqual({
       kind: 'live',
       span: 10 * 60_000,
+    });
+  });
+
+  it('stays live where a wheel or drag comes to rest on now, and stands still where it does not', () => {
+    const live = endsOf({ kind: 'live', span: 8 * hour }, now);
+    expect(lookedAt({ from: now - 6 * hour, to: live.to }, now)).toEqual({ kind: 'live', span: 6 * hour });
+    expect(lookedAt({ from: now - 9 * hour, to: now - hour }, now)).toEqual({
+      kind: 'past',
+      from: now - 9 * hour,
+      to: now - hour,
     });
   });
 });

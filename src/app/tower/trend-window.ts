@@ -35,6 +35,14 @@ export function moved(window: TrendWindow, share: number, now: number): TrendWin
   return settled({ kind: 'past', from: from + by, to: to + by }, now);
 }
 
+/** What a wheel or a drag came to rest on: live again where it reaches now. @param now [UTC ms] */
+export function lookedAt({ from, to }: { from: number; to: number }, now: number): TrendWindow {
+  const span = clamp(to - from);
+  return to >= now
+    ? { kind: 'live', span: clamp(now - from) }
+    : { kind: 'past', from: Math.round(to - span), to };
+}
+
 function settled(window: TrendWindow & { kind: 'past' }, now: number): TrendWindow {
   return window.to >= now ? { kind: 'live', span: window.to - window.from } : window;
 }

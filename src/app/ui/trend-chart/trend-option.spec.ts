@@ -1,12 +1,9 @@
 import type { Trend } from '@shared/api/sensors';
-import { chartColours } from '../ui/chart-colours';
-import {
-  bandStretches,
-  toTrendOption,
-  tooltipText,
-  type TrendPicture,
-  type TrendWords,
-} from './trend-option';
+import { chartColours } from '../chart-colours';
+import { bandStretches } from './trend-band';
+import { toTrendOption } from './trend-option';
+import type { TrendPicture, TrendWords } from './trend-picture';
+import { tooltipText } from './trend-tooltip';
 
 const minute = 60_000;
 const start = Date.UTC(2026, 10, 20, 12);
@@ -44,10 +41,13 @@ const words: TrendWords = {
   pressureUnit: 'kPa abs',
   offset: (value) => value,
   offsetUnit: 'K',
-  zoneOffset: -4 * 3_600_000,
+  zoneOffset: () => -4 * 3_600_000,
   axisTime: String,
   fullTime: (t) => new Date(t).toISOString(),
   fractionText: (value) => (100 * value).toFixed(2),
+  temperatureText: (kelvin) => (kelvin - 273.15).toFixed(2),
+  pressureText: (pascal) => (pascal / 1000).toFixed(1),
+  offsetText: (value) => value.toFixed(2),
 };
 
 function aPicture(trend = aTrend()): TrendPicture {
@@ -57,7 +57,9 @@ function aPicture(trend = aTrend()): TrendPicture {
     limits: { high: 0.025, low: null, target: 0.015 },
     from: start,
     to: start + 5 * minute,
+    latest: start + 5 * minute,
     isNarrow: false,
+    canDrag: true,
   };
 }
 
@@ -126,8 +128,71 @@ describe('the trend', () => {
       standardisedInnovation: -0.4,
     };
     const text = tooltipText(aPicture(aTrend({ samples: [used] })), words, start + 3 * minute);
-    expect(text).toContain('1.20 mol % (1.10 to 1.30), Uncertain');
+    expect(text).toContain('1.20 mol %, Uncertain\nband  1.10 to 1.30');
     expect(text).toContain('temperature  49.85 °C');
     expect(text).toContain('laboratory  1.21 mol %, used, 0.4 σ');
+  });
+
+  it('draws an impurity from nothing, and a purity near 1 by what is left to it', () => {
+    const scaleOf = (picture: TrendPicture) =>
+      (toTrendOption(picture, words, chartColours(false))['yAxis'] as { min: number; max: number }[])[0]!;
+    expect(scaleOf(aPicture()).min).toBe(0);
+    const { inferred } = aTrend();
+    const pure = aTrend({
+      inferred: {
+        ...inferred,
+        value: [0.962, 0.963, null, 0.961, 0.964],
+        low: [0.958, 0.959, null, 0.957, 0.96],
+        high: [0.966, 0.967, null, 0.965, 0.968],
+      },
+    });
+    const { min, max } = scaleOf({ ...aPicture(pure), limits: { high: null, low: 0.95, target: null } });
+    expect(min).toBeGreaterThan(90);
+    expect(min).toBeLessThanOrEqual(95);
+    expect(max).toBeLessThanOrEqual(100);
+  });
+
+  it('tells the states of samples apart by shape', () => {
+    const samples = (['used', 'held', 'rejected', 'pending'] as const).map((state, id) => ({
+      id,
+      drawnAt: start + id * minute,
+      value: 0.012,
+      state,
+      standardisedInnovation: null,
+    }));
+    const drawn = seriesOf(aPicture(aTrend({ samples }))).find((series) => series.id === 'samples')!.data as {
+      symbol: string;
+      itemStyle: { borderWidth: number; borderType: string };
+    }[];
+    const shapes = drawn.map(({ symbol, itemStyle }) =>
+      [symbol, itemStyle.borderWidth, itemStyle.borderType].join(' '),
+    );
+    expect(new Set(shapes).size).toBe(4);
+  });
+
+  it('writes a note beside its line, on the side where there is room, and not over the next one', () => {
+    const note = (id: number, at: number) => ({
+      id,
+      t: start + at * minute,
+      text: 'Feed changed',
+      author: 'A',
+    });
+    const { markLine } = seriesOf(aPicture(aTrend({ notes: [note(1, 0.2), note(2, 1), note(3, 4.9)] }))).find(
+      (series) => series.id === 'notes',
+    ) as unknown as {
+      markLine: { data: { label: { show: boolean; align: string } }[] };
+    };
+    expect(markLine.data.map(({ label }) => [label.show, label.align])).toEqual([
+      [false, 'left'],
+      [true, 'left'],
+      [true, 'right'],
+    ]);
+  });
+
+  it('can be dragged back by its own length, and not beyond now', () => {
+    const option = toTrendOption(aPicture(), words, chartColours(false));
+    const [axis] = option['xAxis'] as { min: number; max: number }[];
+    expect(axis).toMatchObject({ min: start - 5 * minute, max: start + 5 * minute });
+    expect(option['dataZoom']).toMatchObject([{ startValue: start, endValue: start + 5 * minute }]);
   });
 });

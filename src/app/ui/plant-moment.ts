@@ -7,11 +7,16 @@ import {
   input,
   model,
   signal,
+  untracked,
+  type WritableSignal,
 } from '@angular/core';
 import { MatFormField, MatLabel } from '@angular/material/form-field';
 import { MatInput } from '@angular/material/input';
 import { MatRadioButton, MatRadioGroup } from '@angular/material/radio';
 import { PlantTime, zoneName, type ParsedPlantTime } from '../core/plant-time';
+
+/** Nothing here is older. */
+const earliestDate = '2000-01-01';
 
 /** A date and time on the plant's wall clock. An hour the clock skips or shows twice is asked about, not guessed. */
 @Component({
@@ -26,11 +31,11 @@ import { PlantTime, zoneName, type ParsedPlantTime } from '../core/plant-time';
     <div class="fields">
       <mat-form-field appearance="outline" subscriptSizing="dynamic">
         <mat-label>Date</mat-label>
-        <input matInput type="date" [value]="date()" (input)="date.set(textOf($event))" />
+        <input matInput type="date" [value]="date()" (input)="type(date, $event)" />
       </mat-form-field>
       <mat-form-field appearance="outline" subscriptSizing="dynamic">
         <mat-label>Time</mat-label>
-        <input matInput type="time" [value]="time()" (input)="time.set(textOf($event))" />
+        <input matInput type="time" [value]="time()" (input)="type(time, $event)" />
       </mat-form-field>
     </div>
     @switch (parsed()?.kind) {
@@ -85,11 +90,20 @@ export class PlantMoment {
   protected readonly time = signal('');
   protected readonly which = signal<'earlier' | 'later' | null>(null);
   protected readonly parsed = computed((): ParsedPlantTime | null => {
+    // While its year is typed, a date field says 0002, 0020, 0202.
+    if (this.date() < earliestDate) return null;
     try {
       return this.plantTime.parse(this.date(), this.time());
     } catch {
       return null; // not a whole date and time yet
     }
+  });
+  /** What the fields say [UTC ms]; NaN while they do not say one moment. */
+  private readonly typedMoment = computed(() => {
+    const parsed = this.parsed();
+    const which = this.which();
+    if (parsed?.kind === 'ok') return parsed.t;
+    return parsed?.kind === 'twice' && which ? parsed[which] : Number.NaN;
   });
   protected readonly names = computed(() => {
     const parsed = this.parsed();
@@ -105,25 +119,26 @@ export class PlantMoment {
   );
 
   constructor() {
-    // From outside: a moment set by the form is shown.
+    // From outside: a moment set by the form is shown. One that comes back from the fields changes nothing in them.
     effect(() => {
       const moment = this.moment();
-      if (Number.isNaN(moment)) return;
+      if (Number.isNaN(moment) || Object.is(moment, untracked(this.typedMoment))) return;
       const { date, time } = this.plantTime.wallClock(moment);
       this.date.set(date);
       this.time.set(time);
+      const parsed = untracked(this.parsed);
+      this.which.set(parsed?.kind !== 'twice' ? null : moment < parsed.later ? 'earlier' : 'later');
     });
     // From the fields: what was typed becomes a moment.
     effect(() => {
-      const parsed = this.parsed();
-      const which = this.which();
-      const t =
-        parsed?.kind === 'ok' ? parsed.t : parsed?.kind === 'twice' && which ? parsed[which] : Number.NaN;
-      if (!Object.is(t, this.moment())) this.moment.set(t);
+      const t = this.typedMoment();
+      if (!Object.is(t, untracked(this.moment))) this.moment.set(t);
     });
   }
 
-  protected textOf(event: Event): string {
-    return (event.target as HTMLInputElement).value;
+  protected type(field: WritableSignal<string>, event: Event): void {
+    field.set((event.target as HTMLInputElement).value);
+    // Which of two was meant is asked anew.
+    this.which.set(null);
   }
 }
