@@ -14,7 +14,7 @@ import {
   type MatAutocompleteSelectedEvent,
 } from '@angular/material/autocomplete';
 import { MatButton } from '@angular/material/button';
-import { matchingComponents, namedComponent, type NamedComponent } from './find-component';
+import { matchingComponents, namedComponent, type NamedComponent } from '../ui/find-component';
 
 /** Picks a component from the library by name, abbreviation or formula. */
 @Component({

@@ -1,4 +1,4 @@
-import { matchingComponents, namedComponent } from './find-component';
+import { matchingComponents, namedComponent } from '../ui/find-component';
 import { readPastedSlate } from './pasted-slate';
 
 const library = [

@@ -1,5 +1,5 @@
 import { shortest, typedNumber } from './desk-case';
-import { namedComponent, type NamedComponent } from './find-component';
+import { namedComponent, type NamedComponent } from '../ui/find-component';
 
 export interface PastedSlate {
   readonly rows: readonly { readonly id: string; readonly amount: string }[];

@@ -1,5 +1,5 @@
 import { amountTotal, typedNumber, type Group, type SlateRow } from './desk-case';
-import type { NamedComponent } from './find-component';
+import type { NamedComponent } from '../ui/find-component';
 
 /** What the slate needs to know of a component besides its names. */
 export interface SlateComponent extends NamedComponent {

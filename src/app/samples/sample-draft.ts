@@ -1,4 +1,5 @@
 import type { NewSample } from '@shared/api/samples';
+import { namedComponent, type NamedComponent } from '../ui/find-component';
 
 /** One field of the entry form, as typed. */
 export interface TypedFraction {
@@ -22,36 +23,96 @@ export function typedFractions(typed: readonly TypedFraction[]): NewSample['frac
   });
 }
 
+/** What was found in something pasted. */
+export interface PastedFigures {
+  /** By component; also of components that have no field yet. */
+  readonly figures: readonly TypedFraction[];
+  /** Lines that stand for no figure, as they were; headings and totals are not among them. */
+  readonly unread: readonly string[];
+}
+
+const isTotal = (name: string) => /^(sum|total|totals)\b/i.test(name);
+
 /**
- * Figures pasted from a report or a spreadsheet: a column of numbers for the fields in their order, or lines of name and
- * number for the fields they name.
+ * Figures pasted from a report or a spreadsheet: lines of name and number in any order, the same across in two lines, or a bare
+ * column (or row) of numbers for the fields in their order.
  *
- * @param names of each field's component, as a laboratory might write them, lower case
- * @returns the text for each field, undefined where the paste has nothing for it; null when it is no list of figures
+ * @param fields components of the form's fields, in their order
+ * @param first field that was pasted into: a column shorter than the form begins there
+ * @returns null when it is no list of figures, but ordinary text for one field
  */
-export function pastedFractions(
+export function pastedFigures(
   pasted: string,
-  names: readonly (readonly string[])[],
-): (string | undefined)[] | null {
+  fields: readonly string[],
+  first: number,
+  library: readonly NamedComponent[],
+): PastedFigures | null {
   const rows = pasted
     .split(/\r?\n/)
-    .map((line) => line.split(/\t|;/).map((cell) => cell.trim()))
+    .map(cellsOf)
     .filter((cells) => cells.some((cell) => cell !== ''));
   if (rows.length < 2 && (rows[0]?.length ?? 0) < 2) return null;
-  const isNumber = (cell: string | undefined) =>
-    cell !== undefined && !Number.isNaN(typedNumber(cell) ?? Number.NaN);
-  const [only] = rows;
-  // One row of figures across, or one column of them.
-  const column =
-    rows.length === 1 && only!.every(isNumber)
-      ? only!
-      : rows.every((cells) => cells.length === 1 && isNumber(cells[0]))
-        ? rows.map((cells) => cells[0]!)
-        : null;
-  if (column) return names.map((_, i) => column[i]);
-  const found = names.map(
-    (known) =>
-      rows.find((cells) => known.includes((cells[0] ?? '').toLowerCase()) && isNumber(cells[1]))?.[1],
-  );
-  return found.some((text) => text !== undefined) ? found : null;
+  return bareColumn(rows, fields, first) ?? namedFigures(upright(rows), library);
+}
+
+/** Cells part at tabs and semicolons; in a line without, the figure is what stands after the last blank. */
+function cellsOf(line: string): readonly string[] {
+  const trimmed = line.trim();
+  const parts = /\t|;/.test(line)
+    ? line.split(/\t|;/)
+    : (/^(.*\S)\s+(\S+(?:\s*%)?)$/.exec(trimmed)?.slice(1) ?? [trimmed]);
+  return parts.map((cell) => cell.replace(/%\s*$|^\s*"|"\s*$/g, '').trim());
+}
+
+function bareColumn(
+  rows: readonly (readonly string[])[],
+  fields: readonly string[],
+  first: number,
+): PastedFigures | null {
+  const cells =
+    rows.length === 1 ? rows[0]! : rows.every((row) => row.length === 1) ? rows.map(([cell]) => cell!) : [];
+  const count = cells.filter(isNumber).length;
+  // One "n.d." among numbers keeps its place; a column of names is none of numbers.
+  if (count === 0 || count < cells.length / 2) return null;
+  const start = cells.length >= fields.length ? 0 : first;
+  return {
+    figures: cells.flatMap((text, i) => {
+      const id = fields[start + i];
+      return id === undefined ? [] : [{ id, text }];
+    }),
+    unread: cells.slice(Math.max(0, fields.length - start)),
+  };
+}
+
+function namedFigures(
+  rows: readonly (readonly string[])[],
+  library: readonly NamedComponent[],
+): PastedFigures | null {
+  const figures: TypedFraction[] = [];
+  const unread: string[] = [];
+  rows.forEach((cells, index) => {
+    const [name = '', ...others] = cells.filter((cell) => cell !== '');
+    const component = namedComponent(name, library);
+    const text = others.find(isNumber) ?? others[0];
+    if (component && text !== undefined) figures.push({ id: component.id, text });
+    else if (!isTotal(name) && (index > 0 || others.some(isNumber))) unread.push(cells.join(' ').trim());
+  });
+  return figures.length > 0 ? { figures, unread } : null;
+}
+
+/** Two lines, names above figures, become a line for each name. */
+function upright(rows: readonly (readonly string[])[]): readonly (readonly string[])[] {
+  const [names, amounts] = rows;
+  const isAcross =
+    rows.length === 2 &&
+    names !== undefined &&
+    amounts !== undefined &&
+    !names.some(isNumber) &&
+    amounts.filter(isNumber).length > 1;
+  return isAcross ? names.map((name, column) => [name, amounts[column] ?? '']) : rows;
+}
+
+function isNumber(cell: string): boolean {
+  const value = typedNumber(cell);
+  return value !== undefined && !Number.isNaN(value);
 }

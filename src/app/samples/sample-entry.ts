@@ -3,6 +3,8 @@ import {
   ChangeDetectionStrategy,
   Component,
   ElementRef,
+  Injector,
+  afterNextRender,
   computed,
   inject,
   input,
@@ -22,7 +24,7 @@ import { components, componentById } from '@shared/vle/components';
 import { describeFailure } from '../core/api-error';
 import { Clock } from '../core/clock';
 import { PlantMoment } from '../ui/plant-moment';
-import { pastedFractions, typedFractions, type TypedFraction } from './sample-draft';
+import { pastedFigures, typedFractions, type TypedFraction } from './sample-draft';
 
 /** Where a sample may be drawn, with what its sensors need to know of it. */
 export interface SamplePlace {
@@ -30,6 +32,9 @@ export interface SamplePlace {
   readonly point: 'overhead' | 'bottoms';
   readonly sensors: readonly SensorDetail[];
 }
+
+/** Between drawing and result, common practice, no source [ms]. */
+const usualDelay = 90 * 60_000;
 
 /** A typed result is checked as the server will check it, while it is typed. */
 @Component({
@@ -42,6 +47,7 @@ export interface SamplePlace {
 export class SampleEntry {
   private readonly http = inject(HttpClient);
   private readonly clock = inject(Clock);
+  private readonly injector = inject(Injector);
   private readonly element = inject<ElementRef<HTMLElement>>(ElementRef);
 
   readonly places = input.required<readonly SamplePlace[]>();
@@ -65,13 +71,17 @@ export class SampleEntry {
   ]);
   protected readonly typed = linkedSignal<readonly string[], readonly TypedFraction[]>({
     source: () => this.slate(),
-    // What was typed for a component stays when another point has it too.
-    computation: (slate, previous) =>
-      slate.map((id) => previous?.value.find((one) => one.id === id) ?? { id, text: '' }),
+    // What was typed stays when the point is changed, also for components the other point does not have.
+    computation: (slate, previous) => [
+      ...slate.map((id) => previous?.value.find((one) => one.id === id) ?? { id, text: '' }),
+      ...(previous?.value.filter((one) => !slate.includes(one.id) && one.text.trim() !== '') ?? []),
+    ],
   });
   protected readonly drawnAt = signal(Number.NaN);
   protected readonly receivedAt = signal(Number.NaN);
   protected readonly remark = signal('');
+  /** What a paste brought, and what it left. */
+  protected readonly pasteWords = signal('');
   protected readonly isSending = signal(false);
   protected readonly refusal = signal('');
   /** Set once sending was tried: until then an empty field is no error. */
@@ -97,10 +107,23 @@ export class SampleEntry {
   });
   protected readonly canSend = computed(() => Object.keys(this.check().errors).length === 0);
 
+  /** The drawing time the form began with [UTC ms]: a proposal, said to be one until somebody has set it. */
+  private readonly proposed = signal(Number.NaN);
+  protected readonly isProposed = computed(() => this.drawnAt() === this.proposed());
+
   constructor() {
+    this.proposeTimes();
+  }
+
+  private proposeTimes(): void {
     const now = this.clock.minute();
     this.receivedAt.set(now);
-    this.drawnAt.set(now - 90 * 60_000);
+    this.proposed.set(now - usualDelay);
+    this.drawnAt.set(now - usualDelay);
+  }
+
+  protected isExtra(id: string): boolean {
+    return !this.slate().includes(id);
   }
 
   protected name(id: string): string {
@@ -126,33 +149,50 @@ export class SampleEntry {
     this.typed.update((all) => all.map((one) => (one.id === id ? { id, text: value } : one)));
   }
 
-  /** A column copied from a report fills the fields. */
+  /** A list copied from a report fills the fields, and brings fields for components that had none. */
   protected paste(event: ClipboardEvent): void {
-    const names = this.typed().map(({ id }) => {
-      const component = componentById(id);
-      return [component.id, component.name, component.short, component.formula, component.cas].map((name) =>
-        name.toLowerCase(),
-      );
-    });
-    const pasted = pastedFractions(event.clipboardData?.getData('text') ?? '', names);
+    const fields = this.typed().map(({ id }) => id);
+    const inputs = [...this.element.nativeElement.querySelectorAll('input.fraction')];
+    const first = Math.max(0, inputs.indexOf(event.target as Element));
+    const pasted = pastedFigures(event.clipboardData?.getData('text') ?? '', fields, first, components);
     if (!pasted) return;
     event.preventDefault();
-    this.typed.update((all) => all.map((one, i) => ({ id: one.id, text: pasted[i] ?? one.text })));
+    const brought = new Map(pasted.figures.map(({ id, text }) => [id, text]));
+    this.typed.update((all) => [
+      ...all.map(({ id, text }) => ({ id, text: brought.get(id) ?? text })),
+      ...[...brought].filter(([id]) => !fields.includes(id)).map(([id, text]) => ({ id, text })),
+    ]);
+    const left = pasted.unread.map((line) => `“${line}”`).join(', ');
+    this.pasteWords.set(
+      `${brought.size === 1 ? '1 figure' : `${brought.size} figures`} pasted${left ? `; left out, as it could not be told what it is: ${left}` : ''}.`,
+    );
   }
 
   /** Enter goes on to the next field, as in a spreadsheet; in the last one it sends. */
-  protected goOn(event: Event, index: number): void {
+  protected goOn(event: Event): void {
+    if (!(event.target instanceof HTMLInputElement) || event.target.type === 'radio') return;
     event.preventDefault();
-    const fields = this.element.nativeElement.querySelectorAll<HTMLInputElement>('input.fraction');
-    const next = fields[index + 1];
-    if (next) {
-      next.focus();
-      next.select();
-    } else void this.send();
+    const fields = [
+      ...this.element.nativeElement.querySelectorAll<HTMLInputElement>('input:not([type=radio])'),
+    ];
+    const next = fields[fields.indexOf(event.target) + 1];
+    if (!next) return void this.send();
+    next.focus();
+    if (next.type === 'text') next.select();
+  }
+
+  protected remove(id: string): void {
+    this.typed.update((all) => all.filter((one) => one.id !== id));
   }
 
   protected add(id: string): void {
     this.typed.update((all) => [...all, { id, text: '' }]);
+    // To its field, once it is there.
+    afterNextRender(
+      () =>
+        [...this.element.nativeElement.querySelectorAll<HTMLInputElement>('input.fraction')].at(-1)?.focus(),
+      { injector: this.injector },
+    );
   }
 
   protected textOf(event: Event): string {
@@ -175,17 +215,15 @@ export class SampleEntry {
     try {
       const outcome = sampleOutcome.parse(await firstValueFrom(this.http.post(samplesPath, body)));
       this.entered.emit(outcome);
-      this.typed.update((all) => all.map(({ id }) => ({ id, text: '' })));
+      this.typed.set(this.slate().map((id) => ({ id, text: '' })));
       this.remark.set('');
+      this.pasteWords.set('');
+      this.proposeTimes();
       this.wasTried.set(false);
     } catch (error) {
       // Everything typed stays where it is.
       const failure = describeFailure(error);
-      this.refusal.set(
-        failure.status === 422 || failure.status === 409
-          ? failure.detail
-          : `${failure.title}. ${failure.detail}`,
-      );
+      this.refusal.set(`${failure.words} Nothing that was typed is lost.`);
     } finally {
       this.isSending.set(false);
     }

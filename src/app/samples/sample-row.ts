@@ -2,12 +2,15 @@ import { ChangeDetectionStrategy, Component, computed, inject, input } from '@an
 import { RouterLink } from '@angular/router';
 import type { Sample } from '@shared/api/samples';
 import type { SensorDetail } from '@shared/api/sensors';
-import { componentById } from '@shared/vle/components';
+import { componentById, components } from '@shared/vle/components';
 import { Clock } from '../core/clock';
 import { PlantTime } from '../core/plant-time';
 import { durationWords, formatNumber } from '../ui/numbers';
+import { offsetWords } from '../ui/offset-words';
 import { Quantities } from '../ui/quantities';
 import { SampleSign } from '../ui/sample-sign';
+
+const placeOf = (id: string) => components.findIndex((component) => component.id === id);
 
 /** One result; opened, it shows every component and what it did. */
 @Component({
@@ -23,7 +26,8 @@ export class SampleRow {
   protected readonly quantities = inject(Quantities);
 
   readonly sample = input.required<Sample>();
-  readonly sensor = input<SensorDetail>();
+  /** Of the sample's point. */
+  readonly sensors = input<readonly SensorDetail[]>([]);
 
   protected readonly drawn = computed(() =>
     this.plantTime.dateTime(this.sample().drawnAt, this.clock.minute()),
@@ -32,46 +36,50 @@ export class SampleRow {
     this.plantTime.dateTime(this.sample().receivedAt, this.clock.minute()),
   );
   protected readonly delay = computed(() => durationWords(this.sample().receivedAt - this.sample().drawnAt));
-  private readonly own = computed(
-    () =>
-      this.sample().corrections.find((one) => one.sensorId === this.sensor()?.id) ??
-      this.sample().corrections[0],
+  /** The first sensor speaks for the sample in its line; opened, each has its say. */
+  protected readonly sensor = computed(() => this.sensors()[0]);
+  protected readonly corrections = computed(() =>
+    this.sample().corrections.map((own) => {
+      const { quantities } = this;
+      const sensor = this.sensors().find((one) => one.id === own.sensorId);
+      const offset = offsetWords(sensor?.version?.parameters.correction.domain, quantities);
+      const deviation = Math.sqrt(own.innovationVariance);
+      return {
+        sensorId: own.sensorId,
+        name: sensor?.name ?? own.sensorId,
+        symbol: sensor?.symbol ?? '',
+        value: quantities.fraction(
+          own.value,
+          quantities.fractionDecimals(sensor?.limits.high ?? sensor?.limits.low ?? own.value),
+        ),
+        sigma: formatNumber(own.innovation / deviation, 1, true),
+        offset: `${formatNumber(offset.shown(own.offsetBefore), offset.decimals, true)} → ${offset.text(own.offsetAfter)}`,
+        facts: [
+          {
+            name: 'lined up with',
+            text: `${quantities.temperature(own.temperature, 2)} ${quantities.temperatureUnit()}, ${quantities.pressure(own.pressure)} ${quantities.pressureUnit()}`,
+          },
+          { name: 'observed offset', text: offset.text(own.observedOffset, 3) },
+          {
+            name: 'innovation',
+            text: `${offset.text(own.innovation, 3)}, expected ± ${offset.text(deviation, 3).replace('+', '')}`,
+          },
+          { name: 'gain', text: own.gain.toFixed(2) },
+          {
+            name: 'offset known within (95 %)',
+            text: [own.varianceBefore, own.varianceAfter]
+              .map((variance) => offset.text(2 * Math.sqrt(variance)).replace('+', ''))
+              .join(' → '),
+          },
+        ],
+      };
+    }),
   );
-  protected readonly decimals = computed(() =>
-    this.quantities.fractionDecimals(this.sensor()?.limits.high ?? this.own()?.value ?? 0),
+
+  /** In the order in which people name a slate: lightest families first. */
+  protected readonly fractions = computed(() =>
+    [...this.sample().fractions].sort((a, b) => placeOf(a.id) - placeOf(b.id)),
   );
-  protected readonly value = computed(() => {
-    const own = this.own();
-    return own ? this.quantities.fraction(own.value, this.decimals()) : null;
-  });
-  protected readonly sigma = computed(() => {
-    const own = this.own();
-    return own ? formatNumber(own.innovation / Math.sqrt(own.innovationVariance), 1, true) : null;
-  });
-  protected readonly offset = computed(() => {
-    const own = this.own();
-    if (!own) return null;
-    const text = (kelvin: number) => this.quantities.temperatureChange(kelvin, 2);
-    return `${text(own.offsetBefore)} → ${text(own.offsetAfter)} ${this.quantities.temperatureChangeUnit()}`;
-  });
-  protected readonly facts = computed(() => {
-    const own = this.own();
-    if (!own) return [];
-    const change = (kelvin: number) =>
-      `${this.quantities.temperatureChange(kelvin, 3)} ${this.quantities.temperatureChangeUnit()}`;
-    return [
-      {
-        name: 'lined up with',
-        text: `${this.quantities.temperature(own.temperature, 2)} ${this.quantities.temperatureUnit()}, ${this.quantities.pressure(own.pressure)} ${this.quantities.pressureUnit()}`,
-      },
-      { name: 'observed offset', text: change(own.observedOffset) },
-      {
-        name: 'innovation',
-        text: `${change(own.innovation)}, expected ± ${change(Math.sqrt(own.innovationVariance)).replace('+', '')}`,
-      },
-      { name: 'gain', text: own.gain.toFixed(2) },
-    ];
-  });
 
   protected nameOf(id: string): string {
     return componentById(id).name;

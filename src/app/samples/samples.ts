@@ -34,6 +34,11 @@ import { SampleEffect } from './sample-effect';
 import { SampleEntry, type SamplePlace } from './sample-entry';
 import { SampleRow } from './sample-row';
 
+interface SampleList {
+  readonly items: readonly Sample[];
+  readonly next: string | null;
+}
+
 /** The laboratory's results: one entered, what it changed, and those before it. */
 @Component({
   selector: 'app-samples',
@@ -82,6 +87,7 @@ export class Samples {
 
   protected readonly towerFilter = linkedSignal<string>(() => this.tower() ?? '');
   protected readonly stateFilter = signal<SampleState | ''>('');
+  private readonly filter = computed(() => `${this.towerFilter()} ${this.stateFilter()}`);
   private readonly readings = signal(0);
   protected readonly page = httpResource(
     () => {
@@ -94,13 +100,14 @@ export class Samples {
     },
     { parse: samplePage.parse },
   );
-  /** The first page and the older ones fetched behind it; stays while the first is read again. */
+  /** The first page and the older ones fetched behind it; stays while the first is read again, not when another is asked for. */
   protected readonly list = linkedSignal<
-    { items: readonly Sample[]; next: string | null } | undefined,
-    { items: readonly Sample[]; next: string | null } | undefined
+    { read: SampleList | undefined; filter: string },
+    SampleList | undefined
   >({
-    source: () => (this.page.hasValue() ? this.page.value() : undefined),
-    computation: (read, previous) => read ?? previous?.value,
+    source: () => ({ read: this.page.hasValue() ? this.page.value() : undefined, filter: this.filter() }),
+    computation: ({ read, filter }, previous) =>
+      read ?? (previous?.source.filter === filter ? previous.value : undefined),
   });
   protected readonly outcome = signal<SampleOutcome | null>(null);
   protected readonly isReadingOlder = signal(false);
@@ -142,6 +149,7 @@ export class Samples {
   protected async readOlder(): Promise<void> {
     const known = this.list();
     if (!known?.next) return;
+    const filter = this.filter();
     this.isReadingOlder.set(true);
     try {
       const params = {
@@ -151,19 +159,27 @@ export class Samples {
         ...(this.stateFilter() ? { state: this.stateFilter() } : {}),
       };
       const older = samplePage.parse(await firstValueFrom(this.http.get(samplesPath, { params })));
-      this.list.set({ items: [...known.items, ...older.items], next: older.next });
+      // Another list may have been asked for meanwhile, or this one read again from its beginning.
+      if (this.filter() === filter && this.list()?.next === known.next)
+        this.list.set({ items: [...known.items, ...older.items], next: older.next });
     } catch (error) {
       const failure = describeFailure(error);
-      this.notices.warn(`Older samples could not be read. ${failure.detail}`);
+      this.notices.warn(`Older samples could not be read. ${failure.words}`);
     } finally {
       this.isReadingOlder.set(false);
     }
   }
 
-  /** Name and limit of the product a sample speaks of, for its row. */
-  protected sensorOf(sample: Sample): SensorDetail | undefined {
-    return this.details()?.find(
-      (sensor) => sensor.towerId === sample.towerId && sensor.point === sample.point,
+  /** Names and limits of the products a sample speaks of. */
+  protected sensorsOf(sample: Sample): readonly SensorDetail[] {
+    return (
+      this.details()?.filter(
+        (sensor) => sensor.towerId === sample.towerId && sensor.point === sample.point,
+      ) ?? []
     );
+  }
+
+  protected failure(error: unknown): string {
+    return describeFailure(error).words;
   }
 }

@@ -10,11 +10,12 @@ import { describeFailure } from '../core/api-error';
 import { Clock } from '../core/clock';
 import { Notices } from '../core/notices';
 import { SessionStore } from '../core/session';
+import { PlantMoment } from '../ui/plant-moment';
 
-/** A note on the trend, at this moment, for the next shift to read. */
+/** A note on the trend, at this moment or another, for the next shift to read. */
 @Component({
   selector: 'app-note-form',
-  imports: [MatButton, MatFormField, MatInput, MatLabel, ReactiveFormsModule],
+  imports: [MatButton, MatFormField, MatInput, MatLabel, PlantMoment, ReactiveFormsModule],
   changeDetection: ChangeDetectionStrategy.OnPush,
   host: { class: 'card' },
   template: `
@@ -25,6 +26,14 @@ import { SessionStore } from '../core/session';
           <mat-label>What happened?</mat-label>
           <textarea matInput [formControl]="text" rows="2" maxlength="1000"></textarea>
         </mat-form-field>
+        @if (isElsewhen()) {
+          <app-plant-moment label="When" [(moment)]="moment" />
+        } @else {
+          <p class="soft small">
+            It will stand at this minute.
+            <button type="button" class="otherwise" (click)="chooseTime()">Choose another time</button>
+          </p>
+        }
         @if (problem(); as words) {
           <p role="alert" class="problem">{{ words }}</p>
         }
@@ -37,10 +46,27 @@ import { SessionStore } from '../core/session';
   styles: `
     :host {
       display: grid;
-      gap: 6px;
+      gap: 8px;
     }
-    mat-form-field {
+    form > mat-form-field {
       width: 100%;
+    }
+    app-plant-moment,
+    .small {
+      margin-bottom: 10px;
+    }
+    .small {
+      font-size: 12px;
+    }
+    .otherwise {
+      min-height: 24px;
+      padding: 0;
+      border: 0;
+      background: none;
+      color: var(--inferred);
+      font: inherit;
+      text-decoration: underline;
+      cursor: pointer;
     }
     .problem {
       margin-bottom: 6px;
@@ -55,28 +81,37 @@ export class NoteForm {
   protected readonly session = inject(SessionStore);
 
   readonly sensorId = input.required<string>();
+  /** What another time begins from: the end of the stretch that is looked at [UTC ms]. */
+  readonly lookedAt = input.required<number>();
   readonly written = output();
 
   protected readonly text = new FormControl('', { nonNullable: true });
+  protected readonly isElsewhen = signal(false);
+  protected readonly moment = signal(Number.NaN);
   protected readonly problem = signal('');
   protected readonly isSending = signal(false);
 
+  protected chooseTime(): void {
+    this.moment.set(Math.min(this.lookedAt(), this.clock.minute()));
+    this.isElsewhen.set(true);
+  }
+
   protected async write(): Promise<void> {
     const text = this.text.value.trim();
+    const t = this.isElsewhen() ? this.moment() : this.clock.now();
     if (text === '') return this.problem.set('Write the note first.');
+    if (Number.isNaN(t)) return this.problem.set('Say when it was.');
     this.isSending.set(true);
     this.problem.set('');
     try {
-      await firstValueFrom(
-        this.http.post(notesPath, { sensorId: this.sensorId(), t: this.clock.now(), text }),
-      );
+      await firstValueFrom(this.http.post(notesPath, { sensorId: this.sensorId(), t, text }));
       this.text.reset();
+      this.isElsewhen.set(false);
       this.notices.tell('The note stands on the trend and in the Journal.');
       this.written.emit();
     } catch (error) {
       // What was written stays in the field.
-      const failure = describeFailure(error);
-      this.problem.set(`${failure.title}. ${failure.detail}`);
+      this.problem.set(describeFailure(error).words);
     } finally {
       this.isSending.set(false);
     }

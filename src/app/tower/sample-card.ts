@@ -2,7 +2,7 @@ import { httpResource } from '@angular/common/http';
 import { ChangeDetectionStrategy, Component, computed, inject, input } from '@angular/core';
 import { RouterLink } from '@angular/router';
 import { sample, samplesPath } from '@shared/api/samples';
-import type { SensorDetail, Trend } from '@shared/api/sensors';
+import type { SensorDetail } from '@shared/api/sensors';
 import { AgeText } from '../ui/age-text';
 import { offsetWords } from '../ui/offset-words';
 import { Quantities } from '../ui/quantities';
@@ -45,12 +45,12 @@ export class SampleCard {
   protected readonly quantities = inject(Quantities);
   readonly sensor = input.required<SensorDetail>();
   readonly decimals = input.required<number>();
-  /** Changes when the trend has been read again, and the sample with it. */
-  readonly reads = input<Trend>();
+  /** Moves when everything is to be read again, the sample with it. */
+  readonly readings = input(0);
 
   private readonly read = httpResource(
     () => {
-      this.reads();
+      this.readings();
       const last = this.sensor().lastSample;
       return last ? `${samplesPath}/${last.id}` : undefined;
     },

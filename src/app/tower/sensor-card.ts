@@ -33,7 +33,8 @@ import { Quantities } from '../ui/quantities';
     }
     dl {
       display: grid;
-      gap: 6px;
+      grid-template-columns: repeat(auto-fill, minmax(190px, 1fr));
+      gap: 6px 24px;
       margin: 0;
     }
     dt {

@@ -102,7 +102,7 @@ export class Tower {
   protected readonly sensorId = computed(() => this.sensor() ?? this.siblings()?.[0]?.id);
 
   /** Read again whenever this moves: after a sample, and after a gap in the stream. */
-  private readonly readings = signal(0);
+  protected readonly readings = signal(0);
   protected readonly detail = httpResource(
     () => {
       this.readings();

@@ -31,7 +31,7 @@ const earliestDate = '2000-01-01';
     <div class="fields">
       <mat-form-field appearance="outline" subscriptSizing="dynamic">
         <mat-label>Date</mat-label>
-        <input matInput type="date" [value]="date()" (input)="type(date, $event)" />
+        <input matInput type="date" max="9999-12-31" [value]="date()" (input)="type(date, $event)" />
       </mat-form-field>
       <mat-form-field appearance="outline" subscriptSizing="dynamic">
         <mat-label>Time</mat-label>
@@ -54,6 +54,8 @@ const earliestDate = '2000-01-01';
     }
     @if (problem(); as words) {
       <p class="problem">{{ words }}</p>
+    } @else if (hint(); as words) {
+      <p class="soft hint">{{ words }}</p>
     }
   `,
   styles: `
@@ -72,6 +74,10 @@ const earliestDate = '2000-01-01';
     mat-form-field {
       width: 160px;
     }
+    .hint {
+      margin-top: 4px;
+      font-size: 12px;
+    }
     .problem {
       color: var(--urgent);
     }
@@ -83,6 +89,8 @@ export class PlantMoment {
   readonly label = input.required<string>();
   /** What is wrong with the moment itself, said beneath. */
   readonly problem = input('');
+  /** Said beneath while nothing is wrong. */
+  readonly hint = input('');
   /** UTC milliseconds; NaN while it is not one moment. */
   readonly moment = model.required<number>();
 

@@ -22,7 +22,7 @@ describe('a value axis', () => {
   });
 
   it('is there even when there is nothing to draw', () => {
-    expect(niceScale(Infinity, -Infinity, 2)).toEqual({ min: 0, max: 1, interval: 0.5, decimals: 1 });
+    expect(niceScale(Infinity, -Infinity, 2)).toMatchObject({ min: 0, max: 1, isEmpty: true });
   });
 
   it('holds its ends for any pair of numbers', () => {

@@ -25,7 +25,7 @@ export function toTrendOption(
 ): EChartsCoreOption {
   const { trend, from, to } = picture;
   const left = picture.isNarrow ? 50 : 64;
-  const right = picture.isNarrow ? 12 : 20;
+  const right = picture.isNarrow ? 12 : 84;
   const composition = compositionScale(picture, words);
   const shown = [
     { name: `${picture.symbol}, ${words.fractionUnit}`, place: lanes.composition, scale: composition },
@@ -77,7 +77,7 @@ export function toTrendOption(
       splitLine: { show: true, lineStyle: { color: colours.line } },
       axisPointer: { label: { show: false } },
     })),
-    yAxis: shown.map(({ name, scale: { decimals, ...scale } }, index) => ({
+    yAxis: shown.map(({ name, scale: { decimals, isEmpty, ...scale } }, index) => ({
       type: 'value',
       gridIndex: index,
       name,
@@ -91,6 +91,8 @@ export function toTrendOption(
       nameGap: 12,
       ...scale,
       axisLabel: {
+        // Numbers beside an empty lane would be invented.
+        show: !isEmpty,
         color: colours.soft,
         fontFamily: chartFonts.numbers,
         fontSize: 12,
@@ -130,7 +132,7 @@ export function toTrendOption(
       bandSeries(trend, words, colours),
       qualityLine('inferred', 0, trend, words, colours),
       qualityLine('inferred, Uncertain', 1, trend, words, colours),
-      limitLines(picture.limits, words, colours),
+      limitLines(picture, words, colours),
       noteLines(picture, words, colours),
       laneLine('temperature', 1, trend.temperature, words.temperature, colours.ink),
       laneLine('pressure', 2, trend.pressure, words.pressure, colours.ink),

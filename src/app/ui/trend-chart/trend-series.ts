@@ -70,7 +70,7 @@ export function qualityLine(
   };
 }
 
-export function limitLines(limits: TrendPicture['limits'], words: TrendWords, colours: ChartColours) {
+export function limitLines({ limits, isNarrow }: TrendPicture, words: TrendWords, colours: ChartColours) {
   const mark = (name: string, value: number | null, type: 'dashed' | 'dotted') =>
     value === null
       ? []
@@ -83,8 +83,8 @@ export function limitLines(limits: TrendPicture['limits'], words: TrendWords, co
               ...onSheet(colours),
               formatter: `${name} ${words.fractionText(value)}`,
               color: colours.limit,
-              // At the old end: at the new one the words would lie over what is looked at most.
-              position: 'insideStartTop' as const,
+              // Beside the lane; where there is no room, at the old end: the new one is looked at most.
+              position: isNarrow ? ('insideStartTop' as const) : ('end' as const),
             },
           },
         ];
